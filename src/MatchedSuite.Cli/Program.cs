@@ -1,0 +1,1 @@
+return MatchedSuite.Cli.CommandLine.Run(args);

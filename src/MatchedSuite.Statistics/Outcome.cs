@@ -1,0 +1,17 @@
+namespace MatchedSuite.Statistics;
+
+/// <summary>Whether a method could be computed, and if not, why not.</summary>
+public enum Outcome
+{
+    /// <summary>The method was computed; statistic and p-value are there.</summary>
+    Tested,
+
+    /// <summary>Fewer complete sets than the method, or the study, needs.</summary>
+    TooFewSets,
+
+    /// <summary>Every difference is the same: there is no spread to measure the mean against.</summary>
+    NoVariation,
+
+    /// <summary>Every difference is zero, or no pair is discordant: the data say nothing about a direction.</summary>
+    NothingDiffers,
+}

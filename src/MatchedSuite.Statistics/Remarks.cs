@@ -1,0 +1,39 @@
+namespace MatchedSuite.Statistics;
+
+/// <summary>What a reader of one result must know beside its numbers. Each has a code in the column <c>flags</c>.</summary>
+[Flags]
+public enum Remarks : long
+{
+    /// <summary>Nothing to remark.</summary>
+    None = 0,
+
+    /// <summary>Some non-zero differences tie; ranks are midranks.</summary>
+    Ties = 1 << 0,
+
+    /// <summary>Some differences are zero.</summary>
+    Zeros = 1 << 1,
+
+    /// <summary>Every difference is the same; no test was made.</summary>
+    NoVariation = 1 << 2,
+
+    /// <summary>The null distribution was enumerated, not approximated.</summary>
+    Exact = 1 << 3,
+
+    /// <summary>The interval reaches the end of what the data can say: the sample is too small for the confidence asked.</summary>
+    WideAsData = 1 << 4,
+
+    /// <summary>A limit is infinite because one discordant count is zero.</summary>
+    OneSidedDiscordance = 1 << 5,
+
+    /// <summary>Fewer usable sets than needed; no test was made.</summary>
+    TooFewSets = 1 << 6,
+
+    /// <summary>No difference points anywhere: all are zero, or no pair is discordant; no test was made.</summary>
+    NothingDiffers = 1 << 7,
+
+    /// <summary>Some values could not be transformed (logarithm of zero or less) and were taken as missing.</summary>
+    TransformUndefined = 1 << 8,
+
+    /// <summary>The smallest p-value this design can give is above what the first step of an adjustment needs.</summary>
+    OutOfReach = 1 << 9,
+}

@@ -1,0 +1,19 @@
+using System.Runtime.CompilerServices;
+
+namespace MatchedSuite.Statistics;
+
+/// <summary>Checks of what a caller hands over; the caller's mistake throws.</summary>
+internal static class Require
+{
+    public static void SameLength(ReadOnlySpan<double> left, ReadOnlySpan<double> right)
+    {
+        if (left.Length != right.Length)
+            throw new ArgumentException($"The two columns have {left.Length} and {right.Length} values; they must have one value per set each.");
+    }
+
+    public static void OpenUnitInterval(double value, [CallerArgumentExpression(nameof(value))] string name = "")
+    {
+        if (!(value > 0 && value < 1))
+            throw new ArgumentOutOfRangeException(name, value, "The value must lie strictly between 0 and 1.");
+    }
+}

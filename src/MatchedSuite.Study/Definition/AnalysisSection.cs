@@ -1,0 +1,48 @@
+using MatchedSuite.Statistics;
+
+namespace MatchedSuite.Study.Definition;
+
+/// <summary>The study file's section <c>analysis</c>: what is computed.</summary>
+public sealed record AnalysisSection
+{
+    /// <summary>Method names by kind of endpoint; the first of a kind is its primary method.</summary>
+    public IReadOnlyDictionary<EndpointKind, IReadOnlyList<string>> Methods { get; init; } =
+        new Dictionary<EndpointKind, IReadOnlyList<string>>();
+
+    /// <summary>Direction of the alternative: index compared with reference.</summary>
+    public Sides Sides { get; init; } = Sides.Two;
+
+    /// <summary>Coverage of the intervals.</summary>
+    public double Confidence { get; init; } = 0.95;
+
+    /// <summary>Names of the adjustments, in the order asked for.</summary>
+    public IReadOnlyList<string> Adjust { get; init; } = ["holm", "bh"];
+
+    /// <summary>Over which hypotheses an adjustment runs.</summary>
+    public FamilyRule Family { get; init; } = FamilyRule.All;
+
+    /// <summary>Level for procedures that control the family-wise error rate.</summary>
+    public double Alpha { get; init; } = 0.05;
+
+    /// <summary>Level for procedures that control the false discovery rate.</summary>
+    public double Fdr { get; init; } = 0.05;
+
+    /// <summary>Random relabelings where not all can be listed.</summary>
+    public int Resamples { get; init; } = 9999;
+
+    /// <summary>Fewer usable sets: the endpoint is listed as untested.</summary>
+    public int MinimumSets { get; init; } = 3;
+}
+
+/// <summary>Over which hypotheses an adjustment runs.</summary>
+public enum FamilyRule
+{
+    /// <summary>All hypotheses of one contrast and stratum together.</summary>
+    All,
+
+    /// <summary>Each family of endpoints by itself.</summary>
+    ByFamily,
+
+    /// <summary>Families first, then endpoints within the selected families.</summary>
+    ByFamilyThenAll,
+}

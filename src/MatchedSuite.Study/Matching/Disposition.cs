@@ -1,0 +1,35 @@
+namespace MatchedSuite.Study.Matching;
+
+/// <summary>What became of one row of the sample sheet; every row has exactly one.</summary>
+public enum Disposition
+{
+    /// <summary>In a complete set that is analysed.</summary>
+    Used,
+
+    /// <summary>The link column is empty.</summary>
+    SetMissing,
+
+    /// <summary>The role (visit, arm) column is empty.</summary>
+    RoleMissing,
+
+    /// <summary>The role (visit, arm) is none of those the study names.</summary>
+    RoleOfNoInterest,
+
+    /// <summary>The file of measurements has no such sample.</summary>
+    NotInValues,
+
+    /// <summary>The person already stands in another set.</summary>
+    PersonInTwoSets,
+
+    /// <summary>Another sample, earlier in the sheet, already stands in this place of the set.</summary>
+    DuplicatePlace,
+
+    /// <summary>The set lacks the other role.</summary>
+    NoPartner,
+
+    /// <summary>The set breaks a promise of the matching and such sets are dropped.</summary>
+    OutsideTolerance,
+
+    /// <summary>The set's stratum is empty or its members disagree on it.</summary>
+    StratumUnclear,
+}
