@@ -16,4 +16,16 @@ internal static class Require
         if (!(value > 0 && value < 1))
             throw new ArgumentOutOfRangeException(name, value, "The value must lie strictly between 0 and 1.");
     }
+
+    public static void Positive(double value, [CallerArgumentExpression(nameof(value))] string name = "")
+    {
+        if (!(value > 0))
+            throw new ArgumentOutOfRangeException(name, value, "The value must be greater than 0.");
+    }
+
+    public static void PositiveFinite(double value, [CallerArgumentExpression(nameof(value))] string name = "")
+    {
+        if (!(value > 0 && value < double.PositiveInfinity))
+            throw new ArgumentOutOfRangeException(name, value, "The value must be greater than 0 and finite.");
+    }
 }
