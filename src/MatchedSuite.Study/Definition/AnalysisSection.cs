@@ -32,17 +32,19 @@ public sealed record AnalysisSection
 
     /// <summary>Fewer usable sets: the endpoint is listed as untested.</summary>
     public int MinimumSets { get; init; } = 3;
-}
 
-/// <summary>Over which hypotheses an adjustment runs.</summary>
-public enum FamilyRule
-{
-    /// <summary>All hypotheses of one contrast and stratum together.</summary>
-    All,
+    /// <summary>What the signed-rank test does with differences of zero.</summary>
+    public ZeroRule Zeros { get; init; } = ZeroRule.Drop;
 
-    /// <summary>Each family of endpoints by itself.</summary>
-    ByFamily,
+    /// <summary>Intervals given beside the marginal ones.</summary>
+    public IReadOnlyList<IntervalKind> Intervals { get; init; } = [];
 
-    /// <summary>Families first, then endpoints within the selected families.</summary>
-    ByFamilyThenAll,
+    /// <summary>True where the hypotheses of all contrasts are adjusted together.</summary>
+    public bool AcrossContrasts { get; init; }
+
+    /// <summary>How far each finding can be trusted: what is computed about it.</summary>
+    public SensitivitySection Sensitivity { get; init; } = new();
+
+    /// <summary>Margin of the two one-sided tests, on the analysis scale; null asks none.</summary>
+    public double? EquivalenceMargin { get; init; }
 }

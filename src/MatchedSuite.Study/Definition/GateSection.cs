@@ -12,16 +12,3 @@ public sealed record GateSection
     /// <summary>Largest share of sets an endpoint may miss; beyond it the endpoint is listed as untested.</summary>
     public double? MissingAtMost { get; init; }
 }
-
-/// <summary>What happens to a set that breaks a promise of the matching.</summary>
-public enum Tolerance
-{
-    /// <summary>It is used and listed.</summary>
-    Report,
-
-    /// <summary>It is left out and listed.</summary>
-    Drop,
-
-    /// <summary>The run is refused.</summary>
-    Refuse,
-}
