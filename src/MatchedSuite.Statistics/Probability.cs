@@ -64,6 +64,12 @@ public readonly record struct Probability(double Value, double Log10) : ICompara
             : Log10.CompareTo(other.Log10);
     }
 
+    /// <summary>
+    /// One number that orders as <see cref="CompareTo"/> does, for fast sorts: the value where it has all its digits, else
+    /// the logarithm, which is negative and so stands below every value.
+    /// </summary>
+    internal double SortKey => Value >= SmallestWithAllDigits ? Value : Log10;
+
     /// <summary>True where the left one is smaller.</summary>
     public static bool operator <(Probability left, Probability right) => left.CompareTo(right) < 0;
 

@@ -27,5 +27,18 @@ internal static class Require
     {
         if (!(value > 0 && value < double.PositiveInfinity))
             throw new ArgumentOutOfRangeException(name, value, "The value must be greater than 0 and finite.");
+    public static void OnePerHypothesis(int hypotheses, int entries)
+    {
+        if (hypotheses != entries)
+            throw new ArgumentException($"There are {hypotheses} p-values but {entries} entries beside them; each hypothesis needs exactly one.");
+    }
+
+    public static void Weights(ReadOnlySpan<double> weights)
+    {
+        for (int i = 0; i < weights.Length; i++)
+        {
+            if (!(weights[i] >= 0 && double.IsFinite(weights[i])))
+                throw new ArgumentException($"Weight {i + 1} is {weights[i]}; a weight must be a finite number, 0 or more.");
+        }
     }
 }
