@@ -10,7 +10,7 @@ namespace MatchedSuite.Statistics;
 public readonly record struct Probability(double Value, double Log10) : IComparable<Probability>
 {
     // Below this a double begins to lose digits, so the logarithm decides.
-    private const double SmallestWithAllDigits = 1e-290;
+    internal const double SmallestWithAllDigits = 1e-290;
 
     /// <summary>The certain event.</summary>
     public static Probability One { get; } = new(1, 0);
