@@ -27,6 +27,8 @@ internal static class Require
     {
         if (!(value > 0 && value < double.PositiveInfinity))
             throw new ArgumentOutOfRangeException(name, value, "The value must be greater than 0 and finite.");
+    }
+
     public static void OnePerHypothesis(int hypotheses, int entries)
     {
         if (hypotheses != entries)
