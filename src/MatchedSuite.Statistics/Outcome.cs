@@ -14,4 +14,7 @@ public enum Outcome
 
     /// <summary>Every difference is zero, or no pair is discordant: the data say nothing about a direction.</summary>
     NothingDiffers,
+
+    /// <summary>More sets lack the endpoint's value than the study allows.</summary>
+    TooManyMissing,
 }

@@ -36,4 +36,7 @@ public enum Remarks : long
 
     /// <summary>The smallest p-value this design can give is above what the first step of an adjustment needs.</summary>
     OutOfReach = 1 << 9,
+
+    /// <summary>More sets lack the endpoint's value than the study allows; no test was made.</summary>
+    TooManyMissing = 1 << 10,
 }

@@ -51,6 +51,7 @@ public readonly record struct TestResult()
         Outcome.TooFewSets => Remarks.TooFewSets,
         Outcome.NoVariation => Remarks.NoVariation,
         Outcome.NothingDiffers => Remarks.NothingDiffers,
+        Outcome.TooManyMissing => Remarks.TooManyMissing,
         _ => Remarks.None,
     };
 }
