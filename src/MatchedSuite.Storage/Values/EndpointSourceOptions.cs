@@ -26,4 +26,7 @@ public sealed record EndpointSourceOptions
 
     /// <summary>Folder for scratch files, which are deleted when the source is disposed.</summary>
     public string ScratchFolder { get; init; } = System.IO.Path.GetTempPath();
+
+    /// <summary>Threads that may parse while sample rows in delimited text are reordered; the values do not depend on it.</summary>
+    public int Threads { get; init; } = Environment.ProcessorCount;
 }
