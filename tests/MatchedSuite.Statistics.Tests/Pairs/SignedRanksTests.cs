@@ -8,9 +8,9 @@ public class SignedRanksTests
     [Fact]
     public void Decimals_that_are_equal_tie_though_their_binary_differences_are_not()
     {
-        // 0.67 three times and -0.67; binary subtraction gives two different last digits.
-        var ranks = Ranked([1.94, 2.02, 0.87, 0.2], [1.27, 1.35, 0.2, 0.87]);
-        Assert.NotEqual(1.94 - 1.27, 0.87 - 0.2);
+        // 0.67 three times and -0.67; binary subtraction gives three different last digits.
+        var ranks = Ranked([1.94, 2.02, 1.1, 0.35], [1.27, 1.35, 0.43, 1.02]);
+        Assert.NotEqual(1.94 - 1.27, 1.1 - 0.43);
         Assert.Equal([5, 5, 5, 5], ranks.DoubledRanks);
         Assert.Equal(15, ranks.DoubledPositiveSum);
         Assert.Equal(60, ranks.TieTerm);
