@@ -1,0 +1,43 @@
+using MatchedSuite.Statistics.Pairs;
+
+namespace MatchedSuite.Statistics.Tests.Pairs;
+
+public class PairAllocationTests
+{
+    private delegate TestResult Run(in PairSample pairs, TestOptions options, Scratch scratch);
+
+    [Fact]
+    public void No_method_allocates_for_an_endpoint()
+    {
+        var random = new Random(1);
+        double[] index = [.. Enumerable.Range(0, 200).Select(_ => random.NextDouble())];
+        double[] coarse = [.. index.Take(48).Select(v => Math.Round(v, 1))];
+        double[] bits = [.. index.Select(v => v > 0.4 ? 1.0 : 0.0)];
+        var scratch = new Scratch();
+        foreach (Run run in new Run[] { PairedT.Run, SignedRank.Run, SignTest.Run })
+        {
+            Assert.Equal(0, Allocated(run, index, new double[200], scratch));
+            Assert.Equal(0, Allocated(run, coarse, new double[48], scratch));
+        }
+
+        foreach (Run run in new Run[] { McNemar.Run, McNemarCorrected.Run, McNemarExact.Run, McNemarMidP.Run })
+            Assert.Equal(0, Allocated(run, bits, new double[200], scratch));
+    }
+
+    private static long Allocated(Run run, double[] index, double[] reference, Scratch scratch)
+    {
+        Once(run, index, reference, scratch);
+        long before = GC.GetAllocatedBytesForCurrentThread();
+        for (int i = 0; i < 10; i++)
+            Once(run, index, reference, scratch);
+        return GC.GetAllocatedBytesForCurrentThread() - before;
+    }
+
+    private static void Once(Run run, double[] index, double[] reference, Scratch scratch)
+    {
+        using var frame = scratch.Open();
+        // The assertion library allocates, so it stays outside.
+        if (run(PairSample.Of(index, reference, frame), TestOptions.Default, scratch).Outcome != Outcome.Tested)
+            throw new InvalidOperationException("The endpoint should have been tested.");
+    }
+}
