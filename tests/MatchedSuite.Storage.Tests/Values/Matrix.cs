@@ -29,24 +29,31 @@ internal sealed class Matrix
     {
         var blocks = new SortedDictionary<int, List<(string, double[])>>();
         double reached = 0;
-        Parallel.ForEach(
-            System.Collections.Concurrent.Partitioner.Create(source.Blocks(selection), System.Collections.Concurrent.EnumerablePartitionerOptions.NoBuffering),
-            new ParallelOptions { MaxDegreeOfParallelism = threads },
-            () => new EndpointBlock(),
-            (pending, _, block) =>
-            {
-                pending.Load(block);
-                Assert.InRange(block.Count, 0, selection.EndpointsPerBlock);
-                Assert.Equal(selection.Samples.Length, block.Samples);
-                var copy = Enumerable.Range(0, block.Count).Select(i => (block.Names[i], block.Values(i).ToArray())).ToList();
-                lock (blocks)
+        try
+        {
+            Parallel.ForEach(
+                System.Collections.Concurrent.Partitioner.Create(source.Blocks(selection), System.Collections.Concurrent.EnumerablePartitionerOptions.NoBuffering),
+                new ParallelOptions { MaxDegreeOfParallelism = threads },
+                () => new EndpointBlock(),
+                (pending, _, block) =>
                 {
-                    blocks.Add(pending.Number, copy);
-                    reached = Math.Max(reached, pending.Reached);
-                }
-                return block;
-            },
-            _ => { });
+                    pending.Load(block);
+                    Assert.InRange(block.Count, 0, selection.EndpointsPerBlock);
+                    Assert.Equal(selection.Samples.Length, block.Samples);
+                    var copy = Enumerable.Range(0, block.Count).Select(i => (block.Names[i], block.Values(i).ToArray())).ToList();
+                    lock (blocks)
+                    {
+                        blocks.Add(pending.Number, copy);
+                        reached = Math.Max(reached, pending.Reached);
+                    }
+                    return block;
+                },
+                _ => { });
+        }
+        catch (AggregateException several)
+        {
+            System.Runtime.ExceptionServices.ExceptionDispatchInfo.Throw(several.InnerExceptions[0]);
+        }
         Assert.Equal(Enumerable.Range(0, blocks.Count), blocks.Keys);
         Assert.InRange(reached, 0, 1 + 1e-9);
         return [.. blocks.Values.SelectMany(block => block)];
