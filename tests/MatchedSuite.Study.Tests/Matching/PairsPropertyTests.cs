@@ -28,9 +28,9 @@ public class PairsPropertyTests
                 audited++;
                 RequireConsistent(audit, cells);
             },
-            iter: 150,
+            iter: 300,
             threads: 1);
-        Assert.InRange(audited, 25, 150);
+        Assert.InRange(audited, 20, 300);
     }
 
     private static void RequireConsistent(MatchingAudit audit, string[] cells)

@@ -13,12 +13,14 @@ internal sealed class NodeTree
     // The deepest key of a study file stands at level 5; the bound keeps a hostile file from exhausting the stack.
     private const int DeepestLevel = 32;
 
+    private readonly Scanner _scanner;
     private readonly Parser _parser;
     private readonly string _file;
 
     private NodeTree(string text, string file)
     {
-        _parser = new Parser(new StringReader(text));
+        _scanner = new Scanner(new StringReader(text));
+        _parser = new Parser(_scanner);
         _file = file;
     }
 
@@ -28,20 +30,31 @@ internal sealed class NodeTree
     /// <exception cref="RefusalException">A syntax error, no document or several, a duplicate key.</exception>
     public static MapNode Parse(string text, string file)
     {
+        var tree = new NodeTree(text, file);
         try
         {
-            return new NodeTree(text, file).Document();
+            return tree.Document();
         }
         catch (YamlException error)
         {
-            throw new RefusalException(
-                $"{file}, line {Number(error.Start.Line)}, column {Number(error.Start.Column)}",
-                $"the text is not valid YAML ({Plain(error.Message)})",
-                "keys and values, indented with spaces",
-                "Check the indentation, quotes and brackets of this line and the one above.",
-                error);
+            // Some errors are reported without a place, as if on line 1; the scanner has stopped at the right one.
+            Mark mark = error.Start is { Line: 1, Column: 1 } ? tree._scanner.CurrentPosition : error.Start;
+            throw tree.Invalid(mark, Plain(error.Message), error);
+        }
+        catch (InvalidOperationException error)
+        {
+            // The scanner gives up this way on a bracket that is opened and never closed.
+            throw tree.Invalid(tree._scanner.CurrentPosition, "a bracket or quote above is probably not closed", error);
         }
     }
+
+    private RefusalException Invalid(Mark mark, string reason, Exception error) =>
+        new(
+            KeyPlace.Of(_file, mark.Line, mark.Column, ""),
+            $"the text is not valid YAML ({reason})",
+            "keys and values, indented with spaces",
+            "Check the indentation, quotes and brackets of this line and the one above.",
+            error);
 
     private MapNode Document()
     {
