@@ -9,6 +9,9 @@ public sealed record StudyDefinition
     /// <summary>The file's text as read, for the manifest.</summary>
     public required string Text { get; init; }
 
+    /// <summary>What the version that read the file can do; the endpoint dictionary is held against it too.</summary>
+    public Capabilities Available { get; init; } = Capabilities.Everything;
+
     /// <summary>Name of the study.</summary>
     public required string Name { get; init; }
 

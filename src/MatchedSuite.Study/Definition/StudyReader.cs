@@ -30,6 +30,7 @@ public static class StudyReader
         {
             Path = full,
             Text = text,
+            Available = available,
             Name = study.RequiredText("name", "the name of the study"),
             Question = study.Text("question", "the question the study asks"),
             Seed = study.Whole("seed", 0, long.MaxValue) ?? 1,

@@ -1,4 +1,3 @@
-using System.Globalization;
 using MatchedSuite.Storage;
 using MatchedSuite.Storage.Tables;
 using MatchedSuite.Study.Definition;
@@ -9,15 +8,13 @@ namespace MatchedSuite.Study.Matching;
 internal sealed class SheetCells
 {
     private readonly TextTable _sheet;
-    private readonly char _decimalMark;
+    private readonly TextDialect _dialect;
 
     /// <summary>The cells of a sheet.</summary>
     public SheetCells(TextTable sheet, TextDialect dialect)
     {
         _sheet = sheet;
-        // Numbers of a Parquet file have become invariant text, whatever mark the study's text files use.
-        bool parquet = sheet.Path.EndsWith(".parquet", StringComparison.OrdinalIgnoreCase);
-        _decimalMark = parquet ? '.' : dialect.DecimalMark;
+        _dialect = dialect;
     }
 
     /// <summary>Name of the file, for messages.</summary>
@@ -40,25 +37,23 @@ internal sealed class SheetCells
     {
         if (_sheet.Contains(column))
             return _sheet[column];
+        // The sheet may have been read without its other columns; the header knows them all.
+        IReadOnlyList<string> all = TextTable.ReadHeader(_sheet.Path, _dialect);
         throw new RefusalException(
             $"{File}, header",
             $"there is no column '{column}', which the study file names under '{key}'",
-            "one of " + Listing.Of(_sheet.Columns),
-            NearestName.Of(column, _sheet.Columns) is { } nearest ? $"Did you mean '{nearest}'?" : "");
+            "one of " + Listing.Of(all),
+            NearestName.Of(column, all) is { } nearest ? $"Did you mean '{nearest}'?" : "");
     }
 
     /// <summary>A cell of a column as a finite number.</summary>
     /// <exception cref="RefusalException">It is none.</exception>
-    public double Number(string column, int row, string text)
-    {
-        const NumberStyles Style = NumberStyles.AllowLeadingSign | NumberStyles.AllowDecimalPoint | NumberStyles.AllowExponent;
-        string invariant = _decimalMark == '.' ? text : text.Contains('.', StringComparison.Ordinal) ? "" : text.Replace(_decimalMark, '.');
-        return double.TryParse(invariant, Style, CultureInfo.InvariantCulture, out double value) && double.IsFinite(value)
+    public double Number(string column, int row, string text) =>
+        CellNumber.TryRead(_sheet, _dialect, text, out double value)
             ? value
             : throw new RefusalException(
                 $"{Place(row)}, column '{column}'",
                 $"'{text}' is not a number",
                 "a decimal number or a missing mark, since the study file matches this column with 'within'",
                 "Correct the cell, or write 'equal: true' for a column of categories.");
-    }
 }
