@@ -4,16 +4,20 @@ namespace MatchedSuite.Statistics.Distributions;
 /// <remarks>
 /// The integrand is log-concave in s, so it has one peak. In y = log s the trapezoidal rule converges faster than any power of
 /// its step (Trefethen and Weideman 2014, SIAM Review 56(3)); the step starts below the width of the peak and is halved until two
-/// sums agree to half of the digits, which makes the finer one exact to rounding. Everything is scaled by the peak, so that
+/// sums agree to eleven digits, which makes the finer one exact to rounding. Everything is scaled by the peak, so that
 /// tails far below the smallest double come out by their logarithm.
 /// </remarks>
 internal static class NoncentralTIntegral
 {
-    private const double AgreementOfHalfTheDigits = 1e-8;
+    // Halving the step about doubles the digits; this close, the finer sum has them all, and two coarse sums hardly agree by chance.
+    private const double Agreement = 1e-11;
     private const double Negligible = 1e-18;
 
     // In widths of the peak: small enough that one halving is the rule for ten or more df.
     private const double FirstStep = 0.7;
+
+    // The integrand is tame within π/4 of the real line only: a wider step than this could agree by chance.
+    private const double LargestFirstStep = 0.25;
     private static readonly double LogarithmOfTen = Math.Log(10);
 
     /// <summary>The tail, and the derivative of its natural logarithm with respect to δ.</summary>
@@ -21,12 +25,12 @@ internal static class NoncentralTIntegral
     {
         double peak = Peak(t, df, delta, out double width);
         double logPeak = LogIntegrand(peak, t, df, delta, out _);
-        double step = FirstStep * width;
+        double step = Math.Min(FirstStep * width, LargestFirstStep);
         var (sum, weighted) = Sum(peak, step, 0, logPeak, t, df, delta);
         while (true)
         {
             var (between, weightedBetween) = Sum(peak, step, 0.5 * step, logPeak, t, df, delta);
-            bool agree = Math.Abs(between - sum) <= AgreementOfHalfTheDigits * sum;
+            bool agree = Math.Abs(between - sum) <= Agreement * sum;
             sum += between;
             weighted += weightedBetween;
             step *= 0.5;

@@ -1,7 +1,7 @@
 namespace MatchedSuite.Statistics.Distributions;
 
 /// <summary>Student's t distribution; any df &gt; 0, also fractional. At df = +∞ it is the standard normal.</summary>
-/// <remarks>Relative error of a tail near 1e-14; its logarithm stays finite far below the smallest double. Sources: see the formulas' file.</remarks>
+/// <remarks>Relative error of a tail near 1e-14; its logarithm stays finite far below the smallest double. Source: Abramowitz and Stegun (1964) 26.7; see <see cref="StudentTail"/>.</remarks>
 public static class StudentT
 {
     // Up to this tail the root is sought in the tail, above it in the centre, where the tail hardly moves.

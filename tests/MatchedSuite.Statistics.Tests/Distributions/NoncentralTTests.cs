@@ -14,7 +14,21 @@ public class NoncentralTTests
         foreach (double df in Degrees)
             foreach (double t in Statistics)
                 foreach (double delta in Noncentralities)
-                    Assert.Equal(1, NoncentralTIntegral.Upper(t, df, delta).Tail.Value + NoncentralTIntegral.Upper(-t, df, -delta).Tail.Value, 1e-13);
+                    Assert.Equal(1, NoncentralTIntegral.Upper(t, df, delta).Tail.Value + NoncentralTIntegral.Upper(-t, df, -delta).Tail.Value, 2e-14);
+    }
+
+    [Fact]
+    public void The_integral_never_stops_on_two_sums_that_agree_by_chance()
+    {
+        var random = new Random(20_000);
+        for (int i = 0; i < 3000; i++)
+        {
+            double df = Math.Exp(random.NextDouble() * 14 - 0.5);
+            double t = Math.Exp(random.NextDouble() * 9 - 4.5) * (random.Next(2) * 2 - 1);
+            double delta = random.NextDouble() * 40 - 20;
+            double both = NoncentralTIntegral.Upper(t, df, delta).Tail.Value + NoncentralTIntegral.Upper(-t, df, -delta).Tail.Value;
+            Assert.True(Math.Abs(both - 1) < 2e-14, $"df {df}, t {t}, delta {delta}: {both:R}");
+        }
     }
 
     [Fact]
