@@ -33,7 +33,7 @@ internal readonly record struct BetaPoint(double X, double Y, double LogX, doubl
         double y = double.IsPositiveInfinity(odds) ? 1 : odds * x;
         double logOdds = Math.Log(df1 / df2) + Math.Log(f);
         double logX = double.IsPositiveInfinity(odds) ? -logOdds : -LogOnePlus.Of(odds);
-        return new BetaPoint(x, y, logX, odds > 1 ? -LogOnePlus.Of(1 / odds) : logOdds + logX, 0.5 * df1 * (1 - f) * x);
+        return new BetaPoint(x, y, logX, odds > 1 ? -LogOnePlus.Of(1 / odds) : logOdds + logX, double.IsPositiveInfinity(odds) ? -0.5 * df2 : 0.5 * df1 * (1 - f) * x);
     }
 
     /// <summary>The same point seen by the shapes b and a.</summary>

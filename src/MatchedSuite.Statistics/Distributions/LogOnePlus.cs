@@ -29,7 +29,8 @@ internal static class LogOnePlus
         for (int odd = 3; ; odd += 2)
         {
             double longer = sum + power / odd;
-            if (longer == sum)
+            // Negated, so that NaN ends the loop too.
+            if (!(longer < sum || longer > sum))
                 return sum;
             sum = longer;
             power *= square;

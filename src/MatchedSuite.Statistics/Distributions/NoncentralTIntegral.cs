@@ -18,7 +18,6 @@ internal static class NoncentralTIntegral
 
     // The integrand is tame within π/4 of the real line only: a wider step than this could agree by chance.
     private const double LargestFirstStep = 0.25;
-    private static readonly double LogarithmOfTen = Math.Log(10);
 
     /// <summary>The tail, and the derivative of its natural logarithm with respect to δ.</summary>
     public static (Probability Tail, double LogSlope) Upper(double t, double df, double delta)
@@ -30,7 +29,7 @@ internal static class NoncentralTIntegral
         while (true)
         {
             var (between, weightedBetween) = Sum(peak, step, 0.5 * step, logPeak, t, df, delta);
-            bool agree = Math.Abs(between - sum) <= Agreement * sum;
+            bool agree = !(Math.Abs(between - sum) > Agreement * sum);
             sum += between;
             weighted += weightedBetween;
             step *= 0.5;
@@ -85,7 +84,7 @@ internal static class NoncentralTIntegral
                 double term = Math.Exp(LogIntegrand(peak + offset + k * step, t, df, delta, out double hazard) - logPeak);
                 sum += term;
                 weighted += term * hazard;
-                if (term <= Negligible * sum)
+                if (!(term > Negligible * sum))
                     break;
             }
         }
@@ -103,7 +102,7 @@ internal static class NoncentralTIntegral
         return 0.5 * df * shape + logTail;
     }
 
-    private static double LogNormalTail(double x) => StandardNormal.UpperTail(x).Log10 * LogarithmOfTen;
+    private static double LogNormalTail(double x) => StandardNormal.UpperTail(x).Log10 * Tails.LogarithmOfTen;
 
     private static double Hazard(double x, double logTail) => Math.Exp(-0.5 * x * x - StirlingCorrection.HalfLogTwoPi - logTail);
 }

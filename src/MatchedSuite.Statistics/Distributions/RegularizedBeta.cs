@@ -10,7 +10,6 @@ internal static class RegularizedBeta
 {
     // One unit of the last digit of 1: a quotient of two settled recurrences may stay there.
     private const double Close = 2.3e-16;
-    private const double OneOverTwoPi = 0.15915494309189533577;
 
     /// <summary>I_x(a, b), the lower tail of the beta distribution.</summary>
     public static Probability Lower(double a, double b, in BetaPoint point) => point.Excess > 0
@@ -56,7 +55,7 @@ internal static class RegularizedBeta
     }
 
     /// <summary>√(a·b/(2π(a + b))): the part of the density that needs no logarithm.</summary>
-    public static double DensityScale(double a, double b) => Math.Sqrt(a * OneOverTwoPi * (b / (a + b)));
+    public static double DensityScale(double a, double b) => StandardNormal.DensityAtZero * Math.Sqrt(a * (b / (a + b)));
 
     // Partial numerators a_m = (a+m−1)(a+b+m−1)m(b−m)x²/(a+2m−1)², partial denominators as below; modified Lentz method.
     private static double Fraction(double a, double b, in BetaPoint point)
@@ -77,7 +76,8 @@ internal static class RegularizedBeta
             c = denominator + numerator / c;
             double factor = c * d;
             value *= factor;
-            if (Math.Abs(factor - 1) <= Close)
+            // Negated, so that NaN ends the loop too.
+            if (!(Math.Abs(factor - 1) > Close))
                 return value;
         }
     }

@@ -10,7 +10,6 @@ internal static class RegularizedGamma
 {
     // One unit of the last digit of 1: a quotient of two settled recurrences may stay there.
     private const double Close = 2.3e-16;
-    private const double OneOverTwoPi = 0.15915494309189533577;
 
     /// <summary>Q(a, x), the upper tail, for a &gt; 0.</summary>
     public static Probability Upper(double a, double x)
@@ -105,7 +104,7 @@ internal static class RegularizedGamma
         return deviance - StirlingCorrection.Of(a);
     }
 
-    private static double DensityScale(double a) => Math.Sqrt(a * OneOverTwoPi);
+    private static double DensityScale(double a) => StandardNormal.DensityAtZero * Math.Sqrt(a);
 
     private static double Series(double a, double x)
     {
@@ -115,7 +114,8 @@ internal static class RegularizedGamma
         {
             term *= x / (a + n);
             double longer = sum + term;
-            if (longer == sum)
+            // Negated, so that NaN ends the loop too.
+            if (!(longer > sum))
                 return sum;
             sum = longer;
         }
@@ -136,7 +136,8 @@ internal static class RegularizedGamma
             c = partial + numerator / c;
             double factor = c * d;
             value *= factor;
-            if (Math.Abs(factor - 1) <= Close)
+            // Negated, so that NaN ends the loop too.
+            if (!(Math.Abs(factor - 1) > Close))
                 return value;
         }
     }

@@ -4,7 +4,8 @@ namespace MatchedSuite.Statistics.Distributions;
 /// <remarks>It is Student's t with infinite df, and is computed as that.</remarks>
 public static class StandardNormal
 {
-    private const double OneOverRootTwoPi = 0.39894228040143267794;
+    /// <summary>1/√(2π), the density at 0.</summary>
+    internal const double DensityAtZero = 0.39894228040143267794;
 
     /// <summary>P(Z &gt; z). NaN gives a missing probability.</summary>
     public static Probability UpperTail(double z) => StudentT.UpperTail(z, double.PositiveInfinity);
@@ -21,7 +22,7 @@ public static class StandardNormal
     public static double UpperQuantile(double p) => StudentT.UpperQuantile(p, double.PositiveInfinity);
 
     /// <summary>Density at z.</summary>
-    public static double Density(double z) => OneOverRootTwoPi * Math.Exp(-0.5 * z * z);
+    public static double Density(double z) => DensityAtZero * Math.Exp(-0.5 * z * z);
 
     /// <summary>A quantile good to about three digits, to start from; Abramowitz and Stegun (1964) 26.2.23.</summary>
     /// <param name="logTail">Natural logarithm of an upper tail of at most ½.</param>

@@ -18,7 +18,6 @@ internal static class StudentTail
     // The fraction's convergents enclose K; four steps apart this close, the newer one has all its digits.
     private const double Close = 4e-16;
     private const double RescaleAbove = 1e150;
-    private const double OneOverRootTwoPi = 0.39894228040143267794;
 
     /// <summary>P(T &gt; t) for t ≥ 0.</summary>
     public static Probability Upper(double t, double df)
@@ -35,7 +34,7 @@ internal static class StudentTail
         // t² overflows only where 1 + w and w are the same.
         double logOnePlusRatio = double.IsPositiveInfinity(w) ? 2 * Math.Log(t) - Math.Log(df) : LogOnePlus.Of(w);
         double fraction = Fraction(1 / square, v);
-        double constant = OneOverRootTwoPi * StirlingCorrection.HalfStepRatio(0.5 * df);
+        double constant = StandardNormal.DensityAtZero * StirlingCorrection.HalfStepRatio(0.5 * df);
         return v == 0
             ? Tails.Scaled(-0.5 * square, constant * fraction / t)
             : Tails.Scaled(-0.5 * (df - 1) * logOnePlusRatio, constant * fraction / t);
@@ -53,7 +52,8 @@ internal static class StudentTail
         {
             term *= (1 + odd * v) * step / (odd + 2);
             double longer = sum + term;
-            if (longer == sum)
+            // Negated, so that NaN ends the loop too.
+            if (!(longer > sum))
                 return Density(t, df) * t * sum;
             sum = longer;
         }
@@ -65,7 +65,7 @@ internal static class StudentTail
         double v = 1 / df;
         double square = t * t;
         double exponent = v == 0 ? -0.5 * square : -0.5 * (df + 1) * LogOnePlus.Of(square * v);
-        return OneOverRootTwoPi * StirlingCorrection.HalfStepRatio(0.5 * df) * Math.Exp(exponent);
+        return StandardNormal.DensityAtZero * StirlingCorrection.HalfStepRatio(0.5 * df) * Math.Exp(exponent);
     }
 
     /// <summary>t ≥ 0 with P(T &gt; t) = exp(<paramref name="logTail"/>), for a tail of at most about 0.3.</summary>
@@ -75,7 +75,7 @@ internal static class StudentTail
     public static double FarQuantile(double logTail, double df, double start)
     {
         double v = 1 / df;
-        double constant = OneOverRootTwoPi * StirlingCorrection.HalfStepRatio(0.5 * df);
+        double constant = StandardNormal.DensityAtZero * StirlingCorrection.HalfStepRatio(0.5 * df);
         double logConstant = Math.Log(constant);
         // Wallace (1959): the normal deviate of t is near √q·(8 df + 1)/(8 df + 3).
         double stretch = v == 0 ? 1 : (8 * df + 3) / (8 * df + 1);
@@ -144,7 +144,8 @@ internal static class StudentTail
                 (below, olderBelow) = (partial * below + numerator * olderBelow, below);
             }
             double next = above / below;
-            if (Math.Abs(next - fraction) <= Close * next)
+            // Negated, so that NaN ends the loop too.
+            if (!(Math.Abs(next - fraction) > Close * next))
                 return next;
             fraction = next;
             if (below > RescaleAbove)

@@ -6,7 +6,8 @@ public static class Tails
     // Above this a product of double factors keeps all its digits; below it the logarithm carries the result.
     private const double LogarithmOfSafeSize = -660;
 
-    private static readonly double LogarithmOfTen = Math.Log(10);
+    /// <summary>log 10, between natural and decimal logarithms.</summary>
+    internal static readonly double LogarithmOfTen = Math.Log(10);
 
     /// <summary>
     /// The p-value for the alternative asked: <see cref="Sides.Greater"/> takes the upper tail, <see cref="Sides.Less"/> the

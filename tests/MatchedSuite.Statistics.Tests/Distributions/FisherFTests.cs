@@ -59,6 +59,15 @@ public class FisherFTests
     }
 
     [Fact]
+    public void A_variance_ratio_near_the_largest_double_still_has_its_tail()
+    {
+        // Far out the tail is proportional to f^(−df2/2): with 4 denominator df a tenfold f lowers log10 by 2.
+        double near = FisherF.UpperTail(1e307, 100, 4).Log10;
+        Assert.Equal(-2, near - FisherF.UpperTail(1e306, 100, 4).Log10, 1e-9);
+        Assert.Equal(-2 * 7, near - FisherF.UpperTail(1e300, 100, 4).Log10, 1e-9);
+    }
+
+    [Fact]
     public void Missing_in_means_missing_out_and_wrong_degrees_throw()
     {
         Assert.True(FisherF.UpperTail(double.NaN, 3, 5).IsMissing);
