@@ -1,7 +1,7 @@
 namespace MatchedSuite.Storage;
 
 /// <summary>What the names of a table's columns must obey, and how a name that is not among them is answered.</summary>
-internal static class ColumnNames
+public static class ColumnNames
 {
     private const int NamesShown = 12;
 
