@@ -1,0 +1,163 @@
+using System.Globalization;
+using MatchedSuite.Storage.Tables;
+using MatchedSuite.Study.Definition;
+
+namespace MatchedSuite.Engine.Demonstration;
+
+/// <summary>The invented twin study: pairs of twins of whom one works in glasshouses, 200 markers of mixed kinds.</summary>
+/// <remarks>
+/// Everything is invented. Markers of a family move together through a shared factor; twins share most of their level. Some
+/// effects are planted (<c>truth.csv</c> says which), some values are missing, and the sample sheet has the blemishes that
+/// real ones have: a twin without a partner, a sample measured twice, an empty role, a wrong age.
+/// </remarks>
+public static class TwinDemo
+{
+    private const int Pairs = 104;
+    private const int Samples = 2 * Pairs;
+    private const double MissingShare = 0.03;
+    private const long SheetStream = 1_000_000;
+    private const long FactorStream = 2_000_000;
+
+    /// <summary>Writes samples, panel, dictionary, truth and the study file into a folder that exists.</summary>
+    /// <returns>Path of the study file.</returns>
+    public static string Write(string folder, long seed = 20261201)
+    {
+        var numbers = new InventedNumbers(seed);
+        InventedMarker[] markers = Markers();
+        WriteSheet(Path.Combine(folder, "samples.csv"), numbers);
+        WritePanel(Path.Combine(folder, "panel.csv"), markers, numbers);
+        WriteDictionary(Path.Combine(folder, "markers.csv"), markers);
+        WriteTruth(Path.Combine(folder, "truth.csv"), markers);
+        return DemoStudyFile.Write("twins", folder);
+    }
+
+    private static InventedMarker[] Markers() =>
+    [
+        .. Range(140, i => new InventedMarker(
+            $"prot-{i:000}", $"protein {i:000}", EndpointKind.Continuous, "µg/L", Transform.Log2, "proteins", ProteinEffect(i))),
+        .. Range(30, i => new InventedMarker(
+            $"met-{i:00}", $"metabolite {i:00}", EndpointKind.Continuous, "mmol/L", Transform.None, "metabolites", i is 4 or 17 ? 0.55 : i is 22 ? -0.5 : 0)),
+        .. Range(18, i => new InventedMarker(
+            $"sign-{i:00}", $"antibody {i:00} present", EndpointKind.Binary, "", Transform.None, "signs", i is 3 or 11 ? 1.1 : 0)),
+        .. Range(12, i => new InventedMarker(
+            $"score-{i:00}", $"symptom score {i:00}", EndpointKind.Ordinal, "", Transform.None, "symptoms", i is 6 ? 0.7 : 0)),
+    ];
+
+    // Twelve proteins differ, some up and some down, from hardly to plainly visible.
+    private static double ProteinEffect(int protein) => protein % 12 == 5 ? (protein % 24 == 5 ? 1 : -1) * (0.3 + 0.05 * (protein / 12)) : 0;
+
+    private static IEnumerable<InventedMarker> Range(int count, Func<int, InventedMarker> marker) =>
+        Enumerable.Range(1, count).Select(marker);
+
+    private static string SampleName(int sample) => string.Create(CultureInfo.InvariantCulture, $"GT{sample / 2 + 1:000}{(sample % 2 == 0 ? 'a' : 'b')}");
+
+    // The first twin of a pair works in glasshouses in every other pair, as a coin decides.
+    private static bool IsIndex(int sample, InventedNumbers numbers) =>
+        (sample % 2 == 0) == (numbers.Uniform(SheetStream, sample / 2) < 0.5);
+
+    private static void WriteSheet(string path, InventedNumbers numbers)
+    {
+        using var sink = new CsvTableSink(path, Texts("sample", "pair", "person", "glasshouse", "zygosity", "sex", "age"));
+        var batch = new TableBatch(Texts("sample", "pair", "person", "glasshouse", "zygosity", "sex", "age"), Samples + 1);
+        for (int sample = 0; sample < Samples; sample++)
+            AddSheetRow(batch, sample, SampleName(sample), numbers);
+        AddSheetRow(batch, 20, SampleName(20) + "-again", numbers);
+        sink.Write(batch);
+        sink.Complete();
+    }
+
+    private static void AddSheetRow(TableBatch batch, int sample, string name, InventedNumbers numbers)
+    {
+        int pair = sample / 2;
+        bool orphan = sample == 61;
+        bool roleLost = sample == 98;
+        int age = 24 + (int)(44 * numbers.Uniform(SheetStream + 1, pair)) + (sample == 133 ? 11 : 0);
+        bool female = numbers.Uniform(SheetStream + 2, pair) < 0.55;
+        string?[] cells =
+        [
+            name,
+            orphan ? null : string.Create(CultureInfo.InvariantCulture, $"P{pair + 1:000}"),
+            SampleName(sample),
+            roleLost ? null : IsIndex(sample, numbers) ? "yes" : "no",
+            pair % 5 < 2 ? "MZ" : "DZ",
+            female ? "f" : "m",
+            age.ToString(CultureInfo.InvariantCulture),
+        ];
+        for (int column = 0; column < cells.Length; column++)
+            batch.Text(column)[batch.Rows] = cells[column];
+        batch.Rows++;
+    }
+
+    private static void WritePanel(string path, InventedMarker[] markers, InventedNumbers numbers)
+    {
+        TableColumn[] schema =
+            [new("marker", ColumnType.Text), .. Texts([.. Enumerable.Range(0, Samples).Select(SampleName), SampleName(20) + "-again"])];
+        using var sink = new CsvTableSink(path, schema);
+        var batch = new TableBatch(schema, markers.Length);
+        for (int marker = 0; marker < markers.Length; marker++)
+        {
+            batch.Text(0)[marker] = markers[marker].Name;
+            for (int sample = 0; sample < Samples; sample++)
+                batch.Text(sample + 1)[marker] = Cell(markers[marker], marker, sample, numbers);
+            batch.Text(Samples + 1)[marker] = Cell(markers[marker], marker, 20, numbers);
+            batch.Rows++;
+        }
+
+        sink.Write(batch);
+        sink.Complete();
+    }
+
+    private static string? Cell(InventedMarker marker, int stream, int sample, InventedNumbers numbers)
+    {
+        double missing = marker.Name == "prot-077" ? 0.6 : MissingShare;
+        if (numbers.Uniform(stream, 5000 + sample) < missing)
+            return null;
+        double latent = Latent(marker, stream, sample, numbers);
+        return marker.Kind switch
+        {
+            EndpointKind.Binary => marker.Name == "sign-18" || latent < 0.4 ? "0" : "1",
+            EndpointKind.Ordinal => Math.Clamp((int)Math.Floor(latent + 1.5), 0, 4).ToString(CultureInfo.InvariantCulture),
+            _ when marker.Name == "prot-120" && sample is 14 or 87 => "0",
+            _ => Rounded(marker.Transform == Transform.Log2 ? 12 * Math.Pow(2, 0.6 * latent) : 4 + 0.35 * latent),
+        };
+    }
+
+    // Level shared by the twins, a factor shared by the family's markers, the person's own part, and the planted effect.
+    private static double Latent(InventedMarker marker, int stream, int sample, InventedNumbers numbers)
+    {
+        double shared = 0.8 * numbers.Normal(stream, sample / 2);
+        double factor = 0.45 * numbers.Normal(FactorStream + marker.Family.Length, sample);
+        double own = 0.55 * numbers.Normal(stream, 1000 + sample);
+        double effect = IsIndex(sample, numbers) ? marker.Effect : 0;
+        return shared + factor + own + effect;
+    }
+
+    private static string Rounded(double value) => double.Parse(
+        value.ToString("G4", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture).ToString(CultureInfo.InvariantCulture);
+
+    private static void WriteDictionary(string path, InventedMarker[] markers) => WriteMarkers(
+        path, ["endpoint", "label", "kind", "unit", "transform", "family"], markers,
+        marker => [marker.Name, marker.Label, WrittenName.Of(marker.Kind), marker.Unit, WrittenName.Of(marker.Transform), marker.Family]);
+
+    private static void WriteTruth(string path, InventedMarker[] markers) => WriteMarkers(
+        path, ["endpoint", "planted_effect"], markers,
+        marker => [marker.Name, marker.Effect.ToString("0.##", CultureInfo.InvariantCulture)]);
+
+    private static void WriteMarkers(string path, string[] columns, InventedMarker[] markers, Func<InventedMarker, string[]> cells)
+    {
+        using var sink = new CsvTableSink(path, Texts(columns));
+        var batch = new TableBatch(Texts(columns), markers.Length);
+        foreach (InventedMarker marker in markers)
+        {
+            string[] row = cells(marker);
+            for (int column = 0; column < row.Length; column++)
+                batch.Text(column)[batch.Rows] = row[column];
+            batch.Rows++;
+        }
+
+        sink.Write(batch);
+        sink.Complete();
+    }
+
+    private static TableColumn[] Texts(params string[] names) => [.. names.Select(name => new TableColumn(name, ColumnType.Text))];
+}

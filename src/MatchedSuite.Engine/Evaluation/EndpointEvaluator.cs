@@ -1,0 +1,64 @@
+using MatchedSuite.Engine.Planning;
+using MatchedSuite.Engine.Rows;
+using MatchedSuite.Statistics;
+using MatchedSuite.Study.Endpoints;
+
+namespace MatchedSuite.Engine.Evaluation;
+
+/// <summary>Computes every planned row of one endpoint. One worker owns an evaluator.</summary>
+public abstract class EndpointEvaluator(AnalysisPlan plan)
+{
+    /// <summary>Values so far that had no transform and were taken as missing.</summary>
+    public long UndefinedValues { get; private set; }
+
+    /// <summary>Endpoints so far with at least one such value.</summary>
+    public int EndpointsWithUndefinedValues { get; private set; }
+
+    /// <summary>The plan.</summary>
+    protected AnalysisPlan Plan => plan;
+
+    /// <summary>Working memory of this worker.</summary>
+    protected Scratch Scratch { get; } = new();
+
+    /// <summary>Adds the rows of one endpoint: contrast by contrast, all sets before each stratum, method by method.</summary>
+    /// <param name="values">The endpoint's values in the order of the arrangement's rows, NaN where missing; changed in place by the transform.</param>
+    /// <param name="endpoint">What is known of the endpoint.</param>
+    /// <param name="position">The endpoint's position within its block, written into the rows.</param>
+    /// <param name="rows">Where the rows go.</param>
+    /// <exception cref="Storage.RefusalException">A value does not fit the endpoint's kind.</exception>
+    public void Evaluate(Span<double> values, EndpointInfo endpoint, int position, RowBuffer rows)
+    {
+        KindCheck.Run(values, endpoint, plan);
+        int before = rows.Count;
+        AddRows(values, endpoint, rows, out int undefined);
+        if (undefined > 0)
+        {
+            UndefinedValues += undefined;
+            EndpointsWithUndefinedValues++;
+        }
+
+        foreach (ref ResultRow row in rows.Rows[before..])
+        {
+            row.Endpoint = position;
+            if (undefined > 0)
+                row.Remarks |= Remarks.TransformUndefined;
+        }
+    }
+
+    /// <summary>Adds the endpoint's rows, and says how many of its values had no transform.</summary>
+    protected abstract void AddRows(Span<double> values, EndpointInfo endpoint, RowBuffer rows, out int undefined);
+
+    /// <summary>Why an endpoint with so few or so incomplete sets is not tested; null where it is.</summary>
+    /// <param name="designed">Sets that the matching gives.</param>
+    /// <param name="complete">Those of them with every value the comparison needs.</param>
+    /// <param name="samples">Their samples.</param>
+    protected TestResult? UntestedBefore(int designed, int complete, int samples)
+    {
+        if (complete < plan.Study.Analysis.MinimumSets)
+            return TestResult.Untested(Outcome.TooFewSets, complete, samples);
+        double missing = (designed - complete) / (double)designed;
+        return missing > (plan.Study.Gates.MissingAtMost ?? 1)
+            ? TestResult.Untested(Outcome.TooManyMissing, complete, samples)
+            : null;
+    }
+}

@@ -1,0 +1,66 @@
+using MatchedSuite.Engine.Evaluation;
+using MatchedSuite.Engine.Methods;
+using MatchedSuite.Engine.Running;
+using MatchedSuite.Statistics;
+using MatchedSuite.Study.Definition;
+using MatchedSuite.Study.Endpoints;
+using MatchedSuite.Study.Matching;
+
+namespace MatchedSuite.Engine.Planning;
+
+/// <summary>What a run computes on every endpoint, fixed before the first value is read.</summary>
+public sealed class AnalysisPlan
+{
+    private readonly IReadOnlyList<string> _samples;
+    private readonly IDesign _design;
+
+    /// <summary>Lays out a study whose inputs are open.</summary>
+    public AnalysisPlan(StudyInputs inputs)
+    {
+        Study = inputs.Study;
+        Catalogue = inputs.Catalogue;
+        Arrangement = inputs.Audit.Arrangement;
+        SourceColumns = inputs.SourceColumns();
+        Options = new TestOptions { Sides = Study.Analysis.Sides, Confidence = Study.Analysis.Confidence };
+        Adjustments = [.. Study.Analysis.Adjust.Select(AdjustmentTable.Named)];
+        _samples = inputs.Source.Samples;
+        _design = DesignTable.Lay(Study, Arrangement);
+    }
+
+    /// <summary>The study.</summary>
+    public StudyDefinition Study { get; }
+
+    /// <summary>What is known of each endpoint.</summary>
+    public EndpointCatalogue Catalogue { get; }
+
+    /// <summary>Which sample stands where.</summary>
+    public Arrangement Arrangement { get; }
+
+    /// <summary>Where the used samples stand in the file of measurements, in the order of <see cref="Arrangement.Rows"/>.</summary>
+    public int[] SourceColumns { get; }
+
+    /// <summary>The file of measurements, for messages.</summary>
+    public string ValuesFile => Path.GetFileName(Study.Data.Values ?? Study.Data.Samples);
+
+    /// <summary>Names of the comparisons; a row's contrast code is a position here.</summary>
+    public IReadOnlyList<string> Contrasts => _design.Contrasts;
+
+    /// <summary>Names of all planned methods; a row's method code is a position here.</summary>
+    public IReadOnlyList<string> MethodNames => _design.Methods;
+
+    /// <summary>Direction and confidence of every test.</summary>
+    public TestOptions Options { get; }
+
+    /// <summary>The adjustments asked for.</summary>
+    public IReadOnlyList<Adjustment> Adjustments { get; }
+
+    /// <summary>An evaluator for one worker.</summary>
+    public EndpointEvaluator NewEvaluator() => _design.NewEvaluator(this);
+
+    /// <summary>Name of a used sample, by its position in a row of values.</summary>
+    public string SampleName(int position) => _samples[SourceColumns[position]];
+
+    /// <summary>The level an adjusted p-value is compared with.</summary>
+    public double LevelOf(Adjustment adjustment) =>
+        adjustment.Controls == ErrorRate.FamilyWise ? Study.Analysis.Alpha : Study.Analysis.Fdr;
+}

@@ -1,0 +1,16 @@
+using MatchedSuite.Engine.Evaluation;
+
+namespace MatchedSuite.Engine.Planning;
+
+/// <summary>What a kind of design computes on every endpoint.</summary>
+public interface IDesign
+{
+    /// <summary>Names of the comparisons, in output order; a row's contrast code is a position here.</summary>
+    IReadOnlyList<string> Contrasts { get; }
+
+    /// <summary>Names of the methods; a row's method code is a position here.</summary>
+    IReadOnlyList<string> Methods { get; }
+
+    /// <summary>An evaluator for one worker.</summary>
+    EndpointEvaluator NewEvaluator(AnalysisPlan plan);
+}
