@@ -1,0 +1,46 @@
+using System.CommandLine;
+using MatchedSuite.Cli.Terminal;
+using MatchedSuite.Engine.Demonstration;
+using MatchedSuite.Engine.Running;
+using MatchedSuite.Storage;
+
+namespace MatchedSuite.Cli.Commands;
+
+/// <summary><c>matched demo</c>: writes the invented study into a folder and analyses it.</summary>
+internal static class DemoCommand
+{
+    private const string UsualFolder = "matched-demo";
+
+    public static Command Create(CommonOptions common)
+    {
+        var folder = new Option<string>("--out")
+        {
+            Description = "folder for the study and its results", HelpName = "DIR", DefaultValueFactory = _ => UsualFolder,
+        };
+        var command = new Command("demo", "write the invented demo study into a folder and analyse it") { folder };
+        command.SetAction((parsed, cancellation) => Task.FromResult(
+            common.Run(parsed, voice => Run(Path.GetFullPath(parsed.GetRequiredValue(folder)), voice, cancellation))));
+        return command;
+    }
+
+    private static int Run(string folder, Voice voice, CancellationToken cancellation)
+    {
+        string study = WriteStudy(folder);
+        voice.Note($"wrote the invented study {study}; truth.csv beside it says which effects were planted");
+        return AnalyzeCommand.Run(study, new RunOptions(), voice, cancellation);
+    }
+
+    private static string WriteStudy(string folder)
+    {
+        try
+        {
+            Directory.CreateDirectory(folder);
+            return TwinDemo.Write(folder);
+        }
+        catch (Exception error) when (error is IOException or UnauthorizedAccessException)
+        {
+            throw new RefusalException(
+                folder, "the demo study cannot be written there", "a folder that this user may create and fill", "Choose another folder with --out.", error);
+        }
+    }
+}
