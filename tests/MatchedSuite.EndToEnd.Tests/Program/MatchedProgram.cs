@@ -1,0 +1,54 @@
+using System.Diagnostics;
+
+namespace MatchedSuite.EndToEnd.Tests.Program;
+
+/// <summary>The built executable, run as a user runs it.</summary>
+internal static class MatchedProgram
+{
+    private static readonly TimeSpan Patience = TimeSpan.FromMinutes(2);
+
+    /// <summary>Full path of the executable that <c>make build</c> leaves.</summary>
+    public static string Executable { get; } = Path.Combine(RepositoryRoot(), "bin", OperatingSystem.IsWindows() ? "matched.exe" : "matched");
+
+    /// <summary>Runs it in a folder and waits for its end.</summary>
+    public static Finished Run(string folder, params string[] arguments)
+    {
+        using Process process = Start(folder, arguments);
+        Task<string> output = process.StandardOutput.ReadToEndAsync();
+        Task<string> error = process.StandardError.ReadToEndAsync();
+        if (!process.WaitForExit(Patience))
+        {
+            process.Kill(entireProcessTree: true);
+            throw new TimeoutException($"matched {string.Join(' ', arguments)} did not end within {Patience}.");
+        }
+
+        return new Finished(process.ExitCode, output.GetAwaiter().GetResult(), error.GetAwaiter().GetResult());
+    }
+
+    /// <summary>Starts it and leaves it running.</summary>
+    public static Process Start(string folder, params string[] arguments)
+    {
+        Assert.True(File.Exists(Executable), $"{Executable} is not there; run 'make build' first.");
+        var start = new ProcessStartInfo(Executable, arguments)
+        {
+            WorkingDirectory = folder,
+            RedirectStandardOutput = true,
+            RedirectStandardError = true,
+        };
+        return Process.Start(start)!;
+    }
+
+    private static string RepositoryRoot()
+    {
+        for (DirectoryInfo? folder = new(AppContext.BaseDirectory); folder is not null; folder = folder.Parent)
+        {
+            if (File.Exists(Path.Combine(folder.FullName, "MatchedSuite.sln")))
+                return folder.FullName;
+        }
+
+        throw new InvalidOperationException("The tests run outside the repository.");
+    }
+}
+
+/// <summary>How a run of the program ended.</summary>
+internal sealed record Finished(int ExitCode, string Output, string Error);

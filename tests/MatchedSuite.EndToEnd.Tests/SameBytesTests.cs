@@ -1,0 +1,57 @@
+using System.Text.Json;
+using System.Text.Json.Nodes;
+using MatchedSuite.EndToEnd.Tests.Program;
+
+namespace MatchedSuite.EndToEnd.Tests;
+
+/// <summary>The same inputs, study file, seed and version give the same bytes, however the work is divided.</summary>
+public class SameBytesTests
+{
+    private static readonly string[] Written = ["results.parquet", "results.csv", "summary.csv", "summary.md", "audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv"];
+
+    [Fact]
+    public void Threads_and_block_sizes_change_no_byte()
+    {
+        using var folder = new StudyFolder();
+        Assert.Equal(0, folder.Run("demo", "--out", "demo", "--quiet").ExitCode);
+        string[][] ways = [["--threads", "1"], ["--threads", "2"], ["--threads", "7"], ["--threads", "2", "--memory", "64MiB"]];
+        foreach (string[] way in ways)
+        {
+            Assert.Equal(0, folder.Run(["analyze", "demo/study.yaml", "--quiet", "--out", "again", .. way]).ExitCode);
+            foreach (string file in Written)
+                Assert.True(File.ReadAllBytes(folder.At($"demo/results/{file}")).SequenceEqual(File.ReadAllBytes(folder.At($"again/{file}"))), $"{file} with {string.Join(' ', way)}");
+        }
+    }
+
+    [Fact]
+    public void Manifests_differ_in_their_execution_alone()
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        Assert.Equal(0, folder.Run("analyze", "study.yaml", "--out", "one", "--threads", "1").ExitCode);
+        Assert.Equal(0, folder.Run("analyze", "study.yaml", "--out", "two", "--threads", "2").ExitCode);
+        Assert.Equal(WithoutExecution(folder.Read("one/run.json")), WithoutExecution(folder.Read("two/run.json")));
+    }
+
+    [Fact]
+    public void The_manifest_names_every_input_and_output_with_its_hash()
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        Assert.Equal(0, folder.Run("analyze", "study.yaml").ExitCode);
+        using JsonDocument manifest = JsonDocument.Parse(folder.Read("results/run.json"));
+        foreach (JsonElement input in manifest.RootElement.GetProperty("inputs").EnumerateArray())
+            Assert.Equal(Sha256(folder.At(input.GetProperty("file").GetString()!)), input.GetProperty("sha256").GetString());
+        JsonElement[] outputs = [.. manifest.RootElement.GetProperty("outputs").EnumerateArray()];
+        Assert.Equal(7, outputs.Length);
+        foreach (JsonElement output in outputs)
+            Assert.Equal(Sha256(folder.At($"results/{output.GetProperty("file").GetString()}")), output.GetProperty("sha256").GetString());
+    }
+
+    private static string Sha256(string path) => Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(File.ReadAllBytes(path)));
+
+    private static string WithoutExecution(string manifest)
+    {
+        JsonObject root = JsonNode.Parse(manifest)!.AsObject();
+        Assert.True(root.Remove("execution"));
+        return root.ToJsonString();
+    }
+}
