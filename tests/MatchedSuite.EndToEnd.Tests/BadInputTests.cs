@@ -13,7 +13,7 @@ public class BadInputTests
         ["study file empty"] = (f => f.Write("study.yaml", ""), ["study.yaml", "empty"]),
         ["yaml syntax"] = (f => f.Change("study.yaml", "{name: small}", "{name: small"), ["study.yaml", "line"]),
         ["yaml duplicate key"] = (f => f.Change("study.yaml", "schema: 1", "schema: 1\nschema: 1"), ["study.yaml", "line 2", "schema"]),
-        ["misspelt key"] = (f => f.Change("study.yaml", "adjust:", "adjusst:"), ["study.yaml", "line 7", "adjusst", "'adjust'"]),
+        ["misspelt key"] = (f => f.Change("study.yaml", "adjust:", "adjusst:"), ["study.yaml", "line 8", "adjusst", "'adjust'"]),
         ["unknown method"] = (f => f.Change("study.yaml", "signed-rank", "signed-rang"), ["study.yaml", "signed-rang", "signed-rank"]),
         ["method of later work"] = (f => f.Change("study.yaml", "signed-rank", "conditional-logistic"), ["conditional-logistic", "paired-t"]),
         ["sample sheet missing"] = (f => File.Delete(f.At("samples.csv")), ["samples.csv"]),
@@ -62,7 +62,7 @@ public class BadInputTests
         Assert.Contains("xpected ", message, StringComparison.Ordinal);
         Assert.All(Cases[name].Named, named => Assert.Contains(named, message, StringComparison.Ordinal));
         Assert.Empty(run.Output);
-        Assert.Empty(Directory.EnumerateFileSystemEntries(folder.Path).Select(Path.GetFileName).Where(IsOurs));
+        Assert.DoesNotContain(Directory.EnumerateFileSystemEntries(folder.Path).Select(Path.GetFileName), IsOurs);
     }
 
     [Fact]

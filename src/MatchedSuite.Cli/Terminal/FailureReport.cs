@@ -26,6 +26,12 @@ internal static class FailureReport
         {
             return Report(voice, error, ExitCode.Busy);
         }
+        catch (IOException error)
+        {
+            string message = $"{error.Message} Nothing was written; look at the space and the permissions of the disk, then run again.";
+            voice.Error(voice.ShowsTraces ? $"{message}\n{error}" : message);
+            return ExitCode.Failed;
+        }
         catch (OperationCanceledException)
         {
             voice.Error("interrupted; nothing was written");

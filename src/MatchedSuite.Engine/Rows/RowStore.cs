@@ -25,7 +25,16 @@ public sealed class RowStore : IDisposable
     /// <summary>Adds rows at the end.</summary>
     public void Append(ReadOnlySpan<ResultRow> rows)
     {
-        RandomAccess.Write(_file, MemoryMarshal.AsBytes(rows), (long)Count * RowBytes);
+        try
+        {
+            RandomAccess.Write(_file, MemoryMarshal.AsBytes(rows), (long)Count * RowBytes);
+        }
+        catch (ArgumentOutOfRangeException error)
+        {
+            // The framework reports a file that outgrows the system's limit as a wrong argument.
+            throw new IOException($"The file '{_path}' would grow beyond what the system allows.", error);
+        }
+
         Count += rows.Length;
     }
 

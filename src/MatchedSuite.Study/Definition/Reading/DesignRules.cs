@@ -58,7 +58,9 @@ internal static class DesignRules
         var purposes = new Dictionary<string, string>();
         foreach (var (key, column) in Links(design))
         {
-            if (column is not null && !purposes.TryAdd(column, key))
+            // A set of pairs that is a person, before and after, is written as set and subject both.
+            bool personIsSet = key == "subject" && column == design.Set && design.Kind == DesignKind.Pairs;
+            if (column is not null && !personIsSet && !purposes.TryAdd(column, key))
                 throw section.Refuse(key, $"the column '{column}' is already the {purposes[column]}", "a column of its own");
         }
 
