@@ -87,7 +87,7 @@ internal sealed class PairsAudit
                 : Disposition.Used;
         }
 
-        Warn("not-in-values", Count(Disposition.NotInValues), "samples of the sheet that are wanted have no measurements");
+        Warn("not-in-values", Count(Disposition.NotInValues), "sample of interest has no measurements", "samples of interest have no measurements");
     }
 
     private void MarkPersons()
@@ -95,8 +95,8 @@ internal sealed class PairsAudit
         if (_persons is null)
             return;
         int unknown = PersonCheck.Mark(_dispositions, _sets, _persons);
-        Warn("person-in-two-sets", Count(Disposition.PersonInTwoSets), "samples are of a person who already stands in another set; they are left out");
-        Warn("person-missing", unknown, $"samples have no person in the column '{Design.Subject}' and were not checked for use in two sets");
+        Warn("person-in-two-sets", Count(Disposition.PersonInTwoSets), "sample is of a person who already stands in another set; it is left out", "samples are of people who already stand in another set; they are left out");
+        Warn("person-missing", unknown, $"sample has no person in the column '{Design.Subject}' and was not checked for use in two sets", $"samples have no person in the column '{Design.Subject}' and were not checked for use in two sets");
     }
 
     private List<PairMembers> Leave(List<PairMembers> sets, Func<PairMembers, bool> stays, Disposition reason)
@@ -124,15 +124,15 @@ internal sealed class PairsAudit
     private void WarnOfSets(MatchPromise[] promises, List<PairMembers> pairs, int outside)
     {
         if (_study.Gates.Tolerance == Tolerance.Report)
-            Warn("outside-tolerance", outside, "sets are outside match-on and are used");
-        Warn("match-unknown", pairs.Count(pair => promises.Any(promise => !promise.IsKnown(pair))), "used sets lack a value that match-on would check");
-        Warn("stratum-unclear", Count(Disposition.StratumUnclear), "samples stand in sets whose stratum is missing or contradictory; they are left out");
+            Warn("outside-tolerance", outside, "set is outside match-on and is used", "sets are outside match-on and are used");
+        Warn("match-unknown", pairs.Count(pair => promises.Any(promise => !promise.IsKnown(pair))), "used set lacks a value that match-on would check", "used sets lack a value that match-on would check");
+        Warn("stratum-unclear", Count(Disposition.StratumUnclear), "sample stands in a set whose stratum is missing or contradictory; it is left out", "samples stand in sets whose stratum is missing or contradictory; they are left out");
     }
 
-    private void Warn(string code, int count, string text)
+    private void Warn(string code, int count, string one, string several)
     {
         if (count > 0)
-            _warnings.Add(new AuditWarning(code, $"{count} {text}."));
+            _warnings.Add(new AuditWarning(code, $"{count} {(count == 1 ? one : several)}."));
     }
 
     private int Count(Disposition kind) => _dispositions.Count(disposition => disposition == kind);

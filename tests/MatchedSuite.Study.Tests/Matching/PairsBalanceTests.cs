@@ -57,7 +57,7 @@ public class PairsBalanceTests
     public void Reported_breaches_and_unknown_values_are_warnings_and_the_sets_are_used()
     {
         var audit = Audits.Of(Audits.Pairs(Promises), Sheet);
-        Assert.Equal(["2 sets are outside match-on and are used.", "1 used sets lack a value that match-on would check."], audit.Warnings.Select(warning => warning.Text));
+        Assert.Equal(["2 sets are outside match-on and are used.", "1 used set lacks a value that match-on would check."], audit.Warnings.Select(warning => warning.Text));
         Assert.Equal(4, audit.Arrangement.Sets.Length);
     }
 
