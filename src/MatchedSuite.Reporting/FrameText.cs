@@ -27,18 +27,10 @@ internal static class FrameText
     public static string Markdown(DataFrame frame)
     {
         string[][] cells = Cells(frame);
-        var text = new StringBuilder();
-        for (int line = 0; line <= frame.Rows.Count; line++)
-        {
-            text.Append('|');
-            foreach (string[] column in cells)
-                text.Append(' ').Append(column[line].Trim().Replace("|", "\\|", StringComparison.Ordinal)).Append(" |");
-            text.Append('\n');
-            if (line == 0)
-                text.Append('|').AppendJoin('|', frame.Columns.Select(column => IsNumber(column) ? " ---: " : " --- ")).Append("|\n");
-        }
-
-        return text.ToString();
+        var table = new MarkdownTable([.. frame.Columns.Select(column => IsNumber(column) ? ">" + column.Name : column.Name)]);
+        for (int line = 1; line <= frame.Rows.Count; line++)
+            table.Row([.. cells.Select(column => column[line].Trim())]);
+        return table.ToString();
     }
 
     // The name, then the rows, column by column.
