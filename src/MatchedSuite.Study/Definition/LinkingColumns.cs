@@ -1,3 +1,5 @@
+using MatchedSuite.Study.Definition.Reading;
+
 namespace MatchedSuite.Study.Definition;
 
 /// <summary>The columns of the sample sheet that a study names: keys, links, roles, strata, promises, covariates. None is an endpoint.</summary>
@@ -9,8 +11,8 @@ public static class LinkingColumns
         DesignSection design = study.Design;
         string?[] named =
         [
-            study.Data.Sample, design.Set, design.Subject, design.Role?.Column, design.Exposure, design.Visit?.Column,
-            design.Arm?.Column, design.Period?.Column, design.Treatment?.Column, design.Stratum, design.PersonTime,
+            study.Data.Sample, design.Visit?.Window?.Column,
+            .. DesignRules.Links(design).Select(link => link.Column),
             .. design.MatchOn.Select(rule => rule.Column), .. design.Covariates,
         ];
         return named.OfType<string>().ToHashSet(StringComparer.Ordinal);
