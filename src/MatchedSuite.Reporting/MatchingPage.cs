@@ -109,11 +109,20 @@ public static class MatchingPage
         }
 
         int outside = audit.Breaches.Select(breach => breach.Set).Distinct().Count();
-        table.Row("tolerance", outside == 1 ? "1 set outside match-on" : $"{Count(outside)} sets outside match-on", WrittenName.Of(gates.Tolerance), Result(audit, "tolerance"));
+        table.Row("tolerance", outside == 1 ? "1 set outside match-on" : $"{Count(outside)} sets outside match-on", WrittenName.Of(gates.Tolerance), ToleranceResult(gates.Tolerance, outside, audit));
         Add(page, "Gates", table.ToString());
         if (gates.MissingAtMost is { } missing)
             page.Append(Invariant($"\n`missing-at-most` ({100 * missing:0.##}%) is held endpoint by endpoint, in a run that reads the values.\n"));
     }
+
+    private static string ToleranceResult(Tolerance tolerance, int outside, MatchingAudit audit) =>
+        (tolerance, outside) switch
+        {
+            (Tolerance.Refuse, _) => Result(audit, "tolerance"),
+            (_, 0) => "held",
+            (Tolerance.Drop, _) => "left out and listed",
+            _ => "used and listed",
+        };
 
     private static string Result(MatchingAudit audit, string gate) => audit.BrokenGates.Any(broken => broken.Gate == gate) ? "**broken**" : "held";
 

@@ -59,6 +59,16 @@ public class MatchingPageTests
     [Fact]
     public void A_step_that_took_no_row_is_not_listed() => Assert.DoesNotContain(Page, line => line.Contains("role-missing", StringComparison.Ordinal));
 
+    [Theory]
+    [InlineData(Tolerance.Report, "used and listed")]
+    [InlineData(Tolerance.Drop, "left out and listed")]
+    public void A_breach_that_breaks_no_gate_is_not_called_held(Tolerance tolerance, string result)
+    {
+        StudyDefinition study = Study with { Gates = new GateSection { Tolerance = tolerance } };
+        Assert.Contains($"| {result} |", MatchingPage.Text(study, Audit with { BrokenGates = [] }), StringComparison.Ordinal);
+        Assert.Contains("| held |", MatchingPage.Text(study, Audit with { BrokenGates = [], Breaches = [] }), StringComparison.Ordinal);
+    }
+
     [Fact]
     public void Without_promises_there_is_no_balance()
     {
