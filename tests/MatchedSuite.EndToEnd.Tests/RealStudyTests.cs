@@ -8,6 +8,9 @@ public sealed class RealStudyTests : IDisposable
 {
     private const double Tolerance = 1e-10;
 
+    // Tested exactly, where the expected column holds the normal approximation; the decimal table has the exact p.
+    private const string TieFree = "cholesterol";
+
     // Their expected signed ranks were taken on binary differences, in which decimal ties are lost.
     private static readonly string[] DecimalTiesSplit = ["bilirubin", "albumin", "platelets", "protime"];
     private readonly StudyFolder _folder = StudyFolder.Of("pbc");
@@ -39,7 +42,8 @@ public sealed class RealStudyTests : IDisposable
             if (DecimalTiesSplit.Contains(row[0]))
                 continue;
             Close(row[10], results.Number(row[0], "signed-rank", "statistic"));
-            Close(row[11], results.Number(row[0], "signed-rank", "p_value"));
+            if (row[0] != TieFree)
+                Close(row[11], results.Number(row[0], "signed-rank", "p_value"));
         }
     }
 
