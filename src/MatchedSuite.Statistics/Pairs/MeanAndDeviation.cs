@@ -1,6 +1,6 @@
 namespace MatchedSuite.Statistics.Pairs;
 
-/// <summary>Mean and standard deviation (n − 1) of a column, in two passes over fixed lanes.</summary>
+/// <summary>Mean and standard deviation (n − 1) of a column, in two passes over fixed lanes, rarely more.</summary>
 /// <remarks>
 /// The second pass sums the deviations from the first mean: their sum corrects the mean, and their squares, less what the
 /// correction explains, give the variance. Source: Chan, Golub and LeVeque (1983), The American Statistician 37, 242-247.
@@ -10,6 +10,10 @@ internal static class MeanAndDeviation
     // Between these sizes no square underflows or overflows in a way that costs a digit.
     private const double SmallestPlain = 1e-140;
     private const double LargestPlain = 1e150;
+
+    // Where a poor first mean explains more of the squares than this, the subtraction would cost digits: another pass is made.
+    private const double LargestExplained = 1e-3;
+    private const int MostPasses = 4;
 
     /// <summary>Mean and standard deviation of at least two finite values.</summary>
     public static (double Mean, double Deviation) Of(ReadOnlySpan<double> values, Scratch scratch)
@@ -31,10 +35,15 @@ internal static class MeanAndDeviation
     private static (double Mean, double Deviation) Plain(ReadOnlySpan<double> values)
     {
         int n = values.Length;
-        double roughMean = FixedLanes.Sum(values) / n;
-        var (deviations, squares) = FixedLanes.Moments(values, roughMean);
-        double correction = deviations / n;
-        double sumOfSquares = squares - (deviations * correction);
-        return (roughMean + correction, Math.Sqrt(sumOfSquares / (n - 1)));
+        double mean = FixedLanes.Sum(values) / n;
+        for (int pass = 1; ; pass++)
+        {
+            var (deviations, squares) = FixedLanes.Moments(values, mean);
+            double correction = deviations / n;
+            double explained = deviations * correction;
+            mean += correction;
+            if (explained <= LargestExplained * squares || pass == MostPasses)
+                return (mean, Math.Sqrt(Math.Max(0, squares - explained) / (n - 1)));
+        }
     }
 }

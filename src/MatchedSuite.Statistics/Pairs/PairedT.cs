@@ -36,7 +36,7 @@ public static class PairedT
         int df = n - 1;
         double error = deviation / Math.Sqrt(n);
         double t = mean / error;
-        double reach = error * StudentTQuantiles.For(options.TailShare).At(df);
+        double reach = error * StudentTQuantiles.Upper(options.TailShare, df);
         return new TestResult
         {
             Sets = n,

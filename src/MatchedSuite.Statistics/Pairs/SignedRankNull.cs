@@ -41,10 +41,7 @@ internal sealed class SignedRankNull
     {
         if (w < 0)
             return Probability.Zero;
-        if (w >= LargestSum)
-            return Probability.One;
-        // Beyond the middle the complement is the smaller part, so the subtraction loses nothing.
-        return Probability.Of(w < _atMost.Length ? _atMost[w] : 1 - _atMost[LargestSum - w - 1]);
+        return w >= LargestSum ? Probability.One : Probability.Of(Lower(w));
     }
 
     /// <summary>P(W ≥ w).</summary>
@@ -57,7 +54,7 @@ internal sealed class SignedRankNull
         while (low < high)
         {
             long middle = low + ((high - low) / 2);
-            if (AtMost(middle).Value >= share)
+            if (Lower(middle) >= share)
                 high = middle;
             else
                 low = middle + 1;
@@ -65,6 +62,9 @@ internal sealed class SignedRankNull
 
         return low;
     }
+
+    // P(W <= w) for 0 <= w < largest sum. Beyond the middle the complement is the smaller part, so the subtraction loses nothing.
+    private double Lower(long w) => w < _atMost.Length ? _atMost[w] : 1 - _atMost[LargestSum - w - 1];
 
     private double[] LowerHalf(int n)
     {

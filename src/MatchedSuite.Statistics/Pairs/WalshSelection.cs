@@ -18,13 +18,13 @@ internal readonly ref struct WalshSelection
     private const double LeastOvershoot = 8;
     private const double OvershootPerStep = 0.125;
 
+    // A cut this many candidates a row from the last one is sought from the last one.
+    private const double NearPerRow = 2;
+
     // Cuts that may remove less than a quarter before the sure way is taken.
     private const int PatientCuts = 2;
 
-    private readonly ReadOnlySpan<double> _halves;
-    private readonly Span<int> _left;
-    private readonly Span<int> _right;
-    private readonly Span<int> _cut;
+    private readonly WalshStaircase _sums;
     private readonly Span<int> _weights;
     private readonly Span<double> _rowMedians;
     private readonly Span<double> _few;
@@ -32,10 +32,7 @@ internal readonly ref struct WalshSelection
     /// <summary>Prepares selections over the sums of ascending <paramref name="halves"/>, in the memory of <paramref name="frame"/>.</summary>
     public WalshSelection(ReadOnlySpan<double> halves, in Scratch.Frame frame)
     {
-        _halves = halves;
-        _left = frame.Integers(halves.Length);
-        _right = frame.Integers(halves.Length);
-        _cut = frame.Integers(halves.Length);
+        _sums = new WalshStaircase(halves, frame);
         _weights = frame.Integers(halves.Length);
         _rowMedians = frame.Doubles(halves.Length);
         _few = frame.Doubles(SortedAtOnce);
@@ -49,13 +46,14 @@ internal readonly ref struct WalshSelection
     {
         var open = Everything();
         double cut = guess, lastValue = double.NaN, lastCount = double.NaN;
+        var walk = WalshStaircase.Walk.Whole;
         int idle = 0;
         while (open.Candidates > SortedAtOnce)
         {
             long before = open.Candidates;
             if (cut > open.Low && cut <= open.High)
             {
-                open = CutAt(cut, rank, open, out long count);
+                open = CutAt(cut, rank, open, walk, out long count);
                 double secant = (cut - lastValue) / (count - lastCount);
                 if (secant > 0 && double.IsFinite(secant))
                     spacing = secant;
@@ -63,6 +61,8 @@ internal readonly ref struct WalshSelection
                 double step = rank - 0.5 - count;
                 double overshoot = (LeastOvershoot + (OvershootPerStep * Math.Abs(step))) * (1 << idle);
                 cut += spacing * (step + Math.CopySign(overshoot, step));
+                bool isNear = Math.Abs(step) + overshoot <= NearPerRow * (open.EndRow - open.FirstRow);
+                walk = !isNear ? WalshStaircase.Walk.Whole : step > 0 ? WalshStaircase.Walk.UpFromLeft : WalshStaircase.Walk.DownFromRight;
             }
 
             idle = open.Candidates > before - (before / 4) ? idle + 1 : 0;
@@ -77,9 +77,9 @@ internal readonly ref struct WalshSelection
                 continue;
 
             double middle = MiddleRowMedian(open);
-            open = CutAt(middle, rank, open, out _);
+            open = CutAt(middle, rank, open, WalshStaircase.Walk.Whole, out _);
             if (open.Low == middle)
-                open = CutAt(Math.BitIncrement(middle), rank, open, out _);
+                open = CutAt(Math.BitIncrement(middle), rank, open, WalshStaircase.Walk.Whole, out _);
             if (open.Low == middle)
                 return middle;
             idle = 0;
@@ -90,48 +90,32 @@ internal readonly ref struct WalshSelection
 
     private Bracket Everything()
     {
-        int n = _halves.Length;
-        for (int row = 0; row < n; row++)
-        {
-            _left[row] = row;
-            _right[row] = n;
-        }
-
-        return new Bracket(0, n, 0, (long)n * (n + 1) / 2, 2 * _halves[0], 2 * _halves[^1]);
+        _sums.Open();
+        int n = _sums.Left.Length;
+        return new Bracket(0, n, 0, (long)n * (n + 1) / 2, _sums.Sum(0, 0), _sums.Sum(n - 1, n - 1));
     }
 
     // Splits the candidates into those below the value and the others, and keeps the part that holds the rank.
-    private Bracket CutAt(double value, long rank, in Bracket open, out long count)
+    private Bracket CutAt(double value, long rank, in Bracket open, WalshStaircase.Walk walk, out long count)
     {
-        long below = open.Below;
-        int end = _right[open.FirstRow];
-        for (int row = open.FirstRow; row < open.EndRow; row++)
+        long below = _sums.CutAt(value, open.FirstRow, open.EndRow, walk);
+        count = open.Below + below;
+        if (rank <= count)
         {
-            int left = _left[row];
-            double half = _halves[row];
-            end = Math.Min(end, _right[row]);
-            while (end > left && half + _halves[end - 1] >= value)
-                end--;
-            int cut = Math.Max(end, left);
-            _cut[row] = cut;
-            below += cut - left;
+            _sums.KeepBelow(open.FirstRow, open.EndRow);
+            return WithoutEmptyRows(open with { Candidates = below, High = value });
         }
 
-        count = below;
-        int rows = open.EndRow - open.FirstRow;
-        bool isBelow = rank <= below;
-        _cut.Slice(open.FirstRow, rows).CopyTo((isBelow ? _right : _left).Slice(open.FirstRow, rows));
-        return WithoutEmptyRows(isBelow
-            ? open with { Candidates = below - open.Below, High = value }
-            : open with { Candidates = open.Candidates - (below - open.Below), Below = below, Low = value });
+        _sums.KeepOthers(open.FirstRow, open.EndRow);
+        return WithoutEmptyRows(open with { Candidates = open.Candidates - below, Below = count, Low = value });
     }
 
     private Bracket WithoutEmptyRows(in Bracket open)
     {
         int first = open.FirstRow, end = open.EndRow;
-        while (_left[first] == _right[first])
+        while (_sums.Left[first] == _sums.Right[first])
             first++;
-        while (_left[end - 1] == _right[end - 1])
+        while (_sums.Left[end - 1] == _sums.Right[end - 1])
             end--;
         return open with { FirstRow = first, EndRow = end };
     }
@@ -142,10 +126,10 @@ internal readonly ref struct WalshSelection
         double low = double.PositiveInfinity, high = double.NegativeInfinity;
         for (int row = open.FirstRow; row < open.EndRow; row++)
         {
-            if (_left[row] == _right[row])
+            if (_sums.Left[row] == _sums.Right[row])
                 continue;
-            low = Math.Min(low, _halves[row] + _halves[_left[row]]);
-            high = Math.Max(high, _halves[row] + _halves[_right[row] - 1]);
+            low = Math.Min(low, _sums.Sum(row, _sums.Left[row]));
+            high = Math.Max(high, _sums.Sum(row, _sums.Right[row] - 1));
         }
 
         return open with { Low = low, High = high };
@@ -156,10 +140,10 @@ internal readonly ref struct WalshSelection
         int rows = 0;
         for (int row = open.FirstRow; row < open.EndRow; row++)
         {
-            int candidates = _right[row] - _left[row];
+            int candidates = _sums.Right[row] - _sums.Left[row];
             if (candidates == 0)
                 continue;
-            _rowMedians[rows] = _halves[row] + _halves[_left[row] + ((candidates - 1) / 2)];
+            _rowMedians[rows] = _sums.Sum(row, _sums.Left[row] + ((candidates - 1) / 2));
             _weights[rows++] = candidates;
         }
 
@@ -176,14 +160,14 @@ internal readonly ref struct WalshSelection
         int kept = 0;
         for (int row = open.FirstRow; row < open.EndRow; row++)
         {
-            for (int column = _left[row]; column < _right[row]; column++)
-                _few[kept++] = _halves[row] + _halves[column];
+            for (int column = _sums.Left[row]; column < _sums.Right[row]; column++)
+                _few[kept++] = _sums.Sum(row, column);
         }
 
         _few[..kept].Sort();
         return _few[(int)(rank - open.Below - 1)];
     }
 
-    // Candidates: in the rows FirstRow .. EndRow − 1 the columns _left .. _right − 1, all from Low to High, after Below smaller sums.
+    // Candidates: in the rows FirstRow .. EndRow − 1, all from Low to High, after Below smaller sums.
     private readonly record struct Bracket(int FirstRow, int EndRow, long Below, long Candidates, double Low, double High);
 }

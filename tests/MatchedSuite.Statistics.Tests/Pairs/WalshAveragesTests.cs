@@ -65,6 +65,52 @@ public class WalshAveragesTests
             Assert.Equal(listed[rank - 1], averages.Select(rank, median));
     }
 
+    [Theory]
+    [InlineData("normal")]
+    [InlineData("long tails")]
+    [InlineData("five values")]
+    [InlineData("one outlier")]
+    [InlineData("doubling")]
+    public void Of_a_hundred_thousand_differences_the_selected_average_has_its_rank(string shape)
+    {
+        const int n = 100_000;
+        var random = new Random(7);
+        double[] differences = [.. Enumerable.Range(0, n).Select(i => shape switch
+        {
+            "normal" => Enumerable.Range(0, 12).Sum(_ => random.NextDouble()) - 6,
+            "long tails" => Math.Sinh(200 * (random.NextDouble() - 0.5)),
+            "five values" => random.Next(5) - 1.0,
+            "one outlier" => i == 0 ? 1e15 : 0.25,
+            _ => Math.ScaleB(1, i % 1000),
+        })];
+        Array.Sort(differences);
+        var scratch = new Scratch();
+        using var frame = scratch.Open();
+        var averages = WalshAverages.Of(differences, frame);
+        double median = averages.Median();
+        foreach (long rank in new[] { 1, averages.Count / 1000, averages.Count / 2, averages.Count - 77_777, averages.Count })
+        {
+            double selected = averages.Select(rank, median);
+            Assert.True(Below(differences, selected) < rank, $"rank {rank}");
+            Assert.True(Below(differences, Math.BitIncrement(selected)) >= rank, $"rank {rank}");
+        }
+    }
+
+    // How many averages lie below a value, counted row by row.
+    private static long Below(double[] sorted, double value)
+    {
+        long count = 0;
+        int end = sorted.Length;
+        for (int row = 0; row < sorted.Length; row++)
+        {
+            while (end > 0 && (0.5 * sorted[row]) + (0.5 * sorted[end - 1]) >= value)
+                end--;
+            count += Math.Max(0, end - row);
+        }
+
+        return count;
+    }
+
     // One value many times and a few far away: quartiles coincide and the guessed spacing is 0.
     private static Gen<double[]> Spiked() =>
         Gen.Select(Gen.Double[-1e6, 1e6].Array[0, 5], Gen.Int[1, 80]).Select((far, times) => far.Concat(Enumerable.Repeat(1.5, times)).ToArray());
