@@ -43,7 +43,7 @@ public static class SignTest
         if (signed == 0)
             return TestResult.Untested(Outcome.NothingDiffers, n, 2 * n, Remarks.Zeros);
 
-        sorted.Sort();
+        AddressSort.Sort(sorted, frame);
         int quantile = LowerQuantile(n, options.TailShare);
         double low = quantile == 0 ? double.NegativeInfinity : sorted[quantile - 1];
         double high = quantile == 0 ? double.PositiveInfinity : sorted[n - quantile];

@@ -50,7 +50,7 @@ internal readonly ref struct SignedRanks
             sorted[i] = DecimalTies.IsZero(difference, pairs.Roundings[i]) ? 0 : difference;
         }
 
-        sorted.Sort();
+        AddressSort.Sort(sorted, frame);
         int negative = 0;
         while (negative < n && sorted[negative] < 0)
             negative++;

@@ -97,6 +97,7 @@ public class PairLawsTests
     [Theory]
     [InlineData(40)]
     [InlineData(120)]
+    [InlineData(520)]
     public void Signed_rank_excludes_zero_exactly_when_p_says_so_at_every_confidence_on_one_sample(int n)
     {
         var random = new Random(n);
