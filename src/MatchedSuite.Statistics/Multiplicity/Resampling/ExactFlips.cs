@@ -1,0 +1,124 @@
+using System.Numerics;
+using System.Runtime.Intrinsics;
+
+namespace MatchedSuite.Statistics.Multiplicity.Resampling;
+
+/// <summary>Settles in double precision what single precision left open: the few flips that come too near to a threshold.</summary>
+/// <remarks>
+/// A flip is followed once more from the least significant endpoint on. Whole-number sums show which endpoints come near any
+/// of its open thresholds; only those are summed in double precision.
+/// </remarks>
+internal sealed class ExactFlips
+{
+    private const int Row = Lanes.Endpoints;
+
+    private readonly ScaledEndpoints _endpoints;
+    private readonly Thresholds _thresholds;
+    private readonly SignFlips _flips;
+    private readonly SortedDictionary<int, OpenFlip> _open = [];
+
+    public ExactFlips(ScaledEndpoints endpoints, Thresholds thresholds, SignFlips flips)
+    {
+        _endpoints = endpoints;
+        _thresholds = thresholds;
+        _flips = flips;
+    }
+
+    /// <summary>Asks whether a flip's largest w up to a position reaches that position's threshold.</summary>
+    public void AskPosition(int flip, int position)
+    {
+        var open = Open(flip);
+        open.Positions.Add(position);
+        open.Floor = Math.Min(open.Floor, _thresholds.Possibly[position]);
+    }
+
+    /// <summary>Asks for a flip's largest w over all positions, which lies at or above <paramref name="floor"/> in single precision.</summary>
+    public void AskMaximum(int flip, float floor)
+    {
+        var open = Open(flip);
+        open.Floor = Math.Min(open.Floor, floor);
+    }
+
+    /// <summary>Answers what was asked: raises the counts of the positions that are reached and returns the largest w by flip.</summary>
+    public Dictionary<int, double> Settle(QuantizedPanel panel, int[] counts, CancellationToken cancellation)
+    {
+        if (_open.Count == 0)
+            return [];
+        int[] flips = [.. _open.Keys];
+        var parallel = new ParallelOptions { MaxDegreeOfParallelism = _endpoints.Options.Threads, CancellationToken = cancellation };
+        foreach (var open in _open.Values)
+            open.Positions.Sort();
+        for (int tile = 0; tile < QuantizedPanel.TilesOf(_endpoints); tile += panel.Tiles)
+        {
+            panel.Load(tile, cancellation);
+            Parallel.For(0, flips.Length, parallel, () => new double[_endpoints.Sets], (at, _, differences) =>
+            {
+                Follow(panel, flips[at], _open[flips[at]], differences, counts);
+                return differences;
+            }, _ => { });
+        }
+
+        return flips.ToDictionary(flip => flip, flip => _open[flip].Largest);
+    }
+
+    private OpenFlip Open(int flip)
+    {
+        if (!_open.TryGetValue(flip, out var open))
+            _open.Add(flip, open = new OpenFlip());
+        return open;
+    }
+
+    private void Follow(QuantizedPanel panel, int flip, OpenFlip open, Span<double> differences, int[] counts)
+    {
+        Span<ulong> words = new ulong[_flips.Words];
+        _flips.Fill(flip, words);
+        if (_endpoints.Sets % 64 != 0)
+            words[^1] &= (1UL << _endpoints.Sets) - 1;
+        Span<float> lanes = stackalloc float[Row];
+        for (int tile = 0; tile < panel.Tiles; tile++)
+        {
+            panel.Scale(tile).Comparable(SumOf(panel.Values(tile), words)).CopyTo(lanes);
+            int position = (panel.FirstTile + tile) * Row;
+            for (int lane = 0; lane < Row; lane++)
+            {
+                int place = position + lane - _thresholds.Padding;
+                if (place >= 0 && lanes[lane] >= open.Floor)
+                    open.Largest = Math.Max(open.Largest, _endpoints.Comparable(place, words, differences));
+                if (open.Answered < open.Positions.Count && open.Positions[open.Answered] == position + lane)
+                {
+                    if (open.Largest >= _thresholds.Exact[position + lane])
+                        Interlocked.Increment(ref counts[position + lane]);
+                    open.Answered++;
+                }
+            }
+        }
+    }
+
+    private static Vector512<int> SumOf(ReadOnlySpan<int> values, ReadOnlySpan<ulong> flip)
+    {
+        var sum = Vector512<int>.Zero;
+        for (int at = 0; at < values.Length; at += Row)
+            sum += Vector512.Create(values.Slice(at, Row));
+        for (int word = 0; word < flip.Length; word++)
+        {
+            for (ulong bits = flip[word]; bits != 0; bits &= bits - 1)
+            {
+                var changed = Vector512.Create(values.Slice((word * 64 + BitOperations.TrailingZeroCount(bits)) * Row, Row));
+                sum -= changed + changed;
+            }
+        }
+
+        return sum;
+    }
+
+    private sealed class OpenFlip
+    {
+        public List<int> Positions { get; } = [];
+
+        public float Floor { get; set; } = float.PositiveInfinity;
+
+        public double Largest { get; set; } = double.NegativeInfinity;
+
+        public int Answered { get; set; }
+    }
+}
