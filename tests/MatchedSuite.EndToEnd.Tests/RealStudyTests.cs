@@ -9,7 +9,7 @@ public sealed class RealStudyTests : IDisposable
     private const double Tolerance = 1e-10;
 
     // Tested exactly, where the expected column holds the normal approximation; the decimal table has the exact p.
-    private const string TieFree = "cholesterol";
+    private static readonly string[] TieFree = ["cholesterol", "alk_phos"];
 
     // Their expected signed ranks were taken on binary differences, in which decimal ties are lost.
     private static readonly string[] DecimalTiesSplit = ["bilirubin", "albumin", "platelets", "protime"];
@@ -42,7 +42,7 @@ public sealed class RealStudyTests : IDisposable
             if (DecimalTiesSplit.Contains(row[0]))
                 continue;
             Close(row[10], results.Number(row[0], "signed-rank", "statistic"));
-            if (row[0] != TieFree)
+            if (!TieFree.Contains(row[0]))
                 Close(row[11], results.Number(row[0], "signed-rank", "p_value"));
         }
     }

@@ -10,20 +10,20 @@ public static class Available
     /// <summary>The capabilities of this version.</summary>
     public static Capabilities InThisVersion { get; } = new()
     {
-        Designs = DesignTable.Kinds,
+        Designs = DesignTable.All.Select(design => design.Kind).ToHashSet(),
         Layouts = new HashSet<ValueLayout> { ValueLayout.SampleRows, ValueLayout.EndpointRows },
-        Methods = ByKind(kind => [.. PairMethodTable.All.Where(method => method.Kinds.Contains(kind)).Select(method => method.Name)]),
-        DefaultMethods = ByKind(kind => [.. KnownNames.UsualMethods(DesignKind.Pairs, kind).Where(PairMethodTable.Has)]),
+        Methods = ByDesignAndKind((design, kind) => design.MethodsFor(kind)),
+        DefaultMethods = ByDesignAndKind((design, kind) => [.. KnownNames.UsualMethods(design.Kind, kind).Where(design.MethodsFor(kind).Contains)]),
         Adjustments = [.. AdjustmentTable.All.Select(adjustment => adjustment.Name)],
         Transforms = new HashSet<Transform> { Transform.None, Transform.Log, Transform.Log2, Transform.Log10, Transform.Sqrt },
         Families = new HashSet<FamilyRule> { FamilyRule.All, FamilyRule.ByFamily },
         Keys = new HashSet<string>(),
     };
 
-    private static Dictionary<(DesignKind Design, EndpointKind Endpoint), IReadOnlyList<string>> ByKind(
-        Func<EndpointKind, IReadOnlyList<string>> names) =>
-        Enum.GetValues<EndpointKind>()
-            .Select(kind => (kind, Names: names(kind)))
+    private static Dictionary<(DesignKind Design, EndpointKind Endpoint), IReadOnlyList<string>> ByDesignAndKind(
+        Func<DesignEntry, EndpointKind, IReadOnlyList<string>> names) =>
+        DesignTable.All
+            .SelectMany(design => Enum.GetValues<EndpointKind>().Select(kind => (Key: (design.Kind, kind), Names: names(design, kind))))
             .Where(of => of.Names.Count > 0)
-            .ToDictionary(of => (DesignKind.Pairs, of.kind), of => of.Names);
+            .ToDictionary(of => of.Key, of => of.Names);
 }

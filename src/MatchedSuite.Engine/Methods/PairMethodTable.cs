@@ -22,8 +22,9 @@ public static class PairMethodTable
         new("mcnemar-corrected", Binary, EstimateScale.NaturalLog, McNemarCorrected.Run),
     ];
 
-    /// <summary>True where there is a method of this name.</summary>
-    public static bool Has(string name) => All.Any(method => method.Name == name);
+    /// <summary>Names of the methods for a kind of endpoint.</summary>
+    public static IReadOnlyList<string> NamesFor(EndpointKind kind) =>
+        [.. All.Where(method => method.Kinds.Contains(kind)).Select(method => method.Name)];
 
     /// <summary>The method of this name.</summary>
     /// <exception cref="KeyNotFoundException">There is none; the study reader has checked names before.</exception>

@@ -1,3 +1,4 @@
+using MatchedSuite.Engine.Methods;
 using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Matching;
 
@@ -6,14 +7,13 @@ namespace MatchedSuite.Engine.Planning;
 /// <summary>The kinds of design this version can analyse, one line each.</summary>
 public static class DesignTable
 {
-    private static readonly Dictionary<DesignKind, Func<StudyDefinition, Arrangement, IDesign>> Designs = new()
-    {
-        [DesignKind.Pairs] = (study, arrangement) => new PairsDesign(study, arrangement),
-    };
-
-    /// <summary>The kinds there are.</summary>
-    public static IReadOnlySet<DesignKind> Kinds { get; } = Designs.Keys.ToHashSet();
+    /// <summary>Every kind.</summary>
+    public static IReadOnlyList<DesignEntry> All { get; } =
+    [
+        new(DesignKind.Pairs, (study, arrangement) => new PairsDesign(study, arrangement), PairMethodTable.NamesFor),
+    ];
 
     /// <summary>Lays out a study's comparisons and methods.</summary>
-    public static IDesign Lay(StudyDefinition study, Arrangement arrangement) => Designs[study.Design.Kind](study, arrangement);
+    public static IDesign Lay(StudyDefinition study, Arrangement arrangement) =>
+        All.Single(entry => entry.Kind == study.Design.Kind).Lay(study, arrangement);
 }
