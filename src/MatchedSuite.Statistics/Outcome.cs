@@ -17,4 +17,10 @@ public enum Outcome
 
     /// <summary>More sets lack the endpoint's value than the study allows.</summary>
     TooManyMissing,
+
+    /// <summary>The covariates determine the endpoint within every set: its own share cannot be told.</summary>
+    Collinear,
+
+    /// <summary>The likelihood could not be maximised to the accuracy that is promised.</summary>
+    NotConverged,
 }

@@ -39,4 +39,19 @@ public enum Remarks : long
 
     /// <summary>More sets lack the endpoint's value than the study allows; no test was made.</summary>
     TooManyMissing = 1 << 10,
+
+    /// <summary>The endpoint, or a covariate, separates the roles: the likelihood rises without end, so an end of the interval is infinite.</summary>
+    Separated = 1 << 11,
+
+    /// <summary>A covariate is constant within every set or follows from the other covariates; it was left out.</summary>
+    CollinearCovariate = 1 << 12,
+
+    /// <summary>The covariates determine the endpoint within every set; no test was made.</summary>
+    Collinear = 1 << 13,
+
+    /// <summary>The likelihood could not be maximised to the accuracy that is promised; no test was made.</summary>
+    NotConverged = 1 << 14,
+
+    /// <summary>The null distribution was sampled by random relabelings.</summary>
+    Resampled = 1 << 15,
 }

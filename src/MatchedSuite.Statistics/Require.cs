@@ -43,4 +43,36 @@ internal static class Require
                 throw new ArgumentException($"Weight {i + 1} is {weights[i]}; a weight must be a finite number, 0 or more.");
         }
     }
+
+    public static void OneStartASet(ReadOnlySpan<int> starts, int members)
+    {
+        if (starts.IsEmpty || starts[0] != 0 || starts[^1] != members)
+            throw new ArgumentException($"The starts of the sets must begin with 0 and end with the number of members, {members}.");
+        for (int s = 1; s < starts.Length; s++)
+        {
+            if (starts[s] < starts[s - 1])
+                throw new ArgumentException($"Set {s} starts at {starts[s]}, before the set in front of it at {starts[s - 1]}.");
+        }
+    }
+
+    public static void OneEntryAMember(int entries, int members)
+    {
+        if (entries != members)
+            throw new ArgumentException($"There are {entries} entries for {members} members; there must be one a member.");
+    }
+
+    public static int WholeColumns(ReadOnlySpan<double> columns, int rows)
+    {
+        if (columns.IsEmpty)
+            return 0;
+        if (rows == 0 || columns.Length % rows != 0)
+            throw new ArgumentException($"The covariates have {columns.Length} values, which is not a whole number of columns of {rows} rows.");
+        return columns.Length / rows;
+    }
+
+    public static void OneEntryAColumn(int entries, int columns)
+    {
+        if (entries != columns)
+            throw new ArgumentException($"There are {entries} entries for {columns} columns; there must be one a column.");
+    }
 }

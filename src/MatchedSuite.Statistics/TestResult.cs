@@ -52,6 +52,8 @@ public readonly record struct TestResult()
         Outcome.NoVariation => Remarks.NoVariation,
         Outcome.NothingDiffers => Remarks.NothingDiffers,
         Outcome.TooManyMissing => Remarks.TooManyMissing,
+        Outcome.Collinear => Remarks.Collinear,
+        Outcome.NotConverged => Remarks.NotConverged,
         _ => Remarks.None,
     };
 }

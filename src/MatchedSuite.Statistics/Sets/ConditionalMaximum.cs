@@ -1,0 +1,155 @@
+namespace MatchedSuite.Statistics.Sets;
+
+/// <summary>How a climb to the maximum of the conditional likelihood ended.</summary>
+internal enum Ascent
+{
+    /// <summary>At the maximum.</summary>
+    Reached,
+
+    /// <summary>The likelihood rises for ever; <see cref="ConditionalMaximum.Step"/> is a direction along which it does.</summary>
+    Endless,
+
+    /// <summary>Neither was established.</summary>
+    Lost,
+}
+
+/// <summary>A point of the conditional likelihood and the climb from it by Newton's method with step halving.</summary>
+/// <remarks>
+/// The log-likelihood is concave, so a step that is halved until it does not fall leads to the maximum or along a direction of
+/// endless rise. The climb ends where the next step would be shorter than 1e-12 standard errors; that step is still taken, so the
+/// estimate is right to rounding and the information to about 1e-12 of itself.
+/// </remarks>
+internal ref struct ConditionalMaximum
+{
+    private const int MostSteps = 200;
+    private const int MostHalvings = 60;
+
+    // A regular maximum is reached in four to six steps; only then is it worth asking whether there is one.
+    private const int StepsBeforeDoubt = 6;
+    private const double SquaredStep = 1e-24;
+    private const double SquaredStepOfRounding = 1e-12;
+    private const double NoGain = 1e-10;
+    private const double RoundingOfLikelihood = 1e-13;
+
+    // By the time the gain is gone the other coefficients lag by about this share of the endless direction.
+    private const double DirectionTolerance = 1e-6;
+
+    private readonly Span<double> _factor;
+    private readonly Span<double> _newton;
+    private readonly Span<double> _before;
+
+    /// <summary>Takes working memory; the point starts at zero, unevaluated.</summary>
+    public ConditionalMaximum(int columns, in Scratch.Frame frame)
+    {
+        Beta = frame.Doubles(columns);
+        Gradient = frame.Doubles(columns);
+        Information = frame.Doubles(columns * columns);
+        Step = frame.Doubles(columns);
+        _factor = frame.Doubles(columns * columns);
+        _newton = frame.Doubles(columns);
+        _before = frame.Doubles(columns);
+        Beta.Clear();
+    }
+
+    /// <summary>The point: one coefficient a column.</summary>
+    public Span<double> Beta { get; }
+
+    /// <summary>First derivatives at the point.</summary>
+    public Span<double> Gradient { get; }
+
+    /// <summary>Information at the point, lower triangle.</summary>
+    public Span<double> Information { get; }
+
+    /// <summary>The last step tried, one entry a column.</summary>
+    public Span<double> Step { get; }
+
+    /// <summary>Log-likelihood at the point.</summary>
+    public double LogLikelihood { get; private set; }
+
+    /// <summary>How often the likelihood was evaluated.</summary>
+    public int Evaluations { get; private set; }
+
+    /// <summary>Evaluates the likelihood at the point.</summary>
+    public void Evaluate(in ConditionalLikelihood likelihood)
+    {
+        LogLikelihood = likelihood.Evaluate(Beta, Gradient, Information);
+        Evaluations++;
+    }
+
+    /// <summary>Climbs from an evaluated point, moving some coefficients only.</summary>
+    /// <param name="likelihood">What to maximise.</param>
+    /// <param name="free">The columns whose coefficients move.</param>
+    public Ascent Climb(in ConditionalLikelihood likelihood, ReadOnlySpan<int> free)
+    {
+        Step.Clear();
+        if (free.IsEmpty)
+            return Ascent.Reached;
+        double squared = double.PositiveInfinity;
+        for (int count = 1; count <= MostSteps; count++)
+        {
+            if (!Cholesky.TryFactor(Information, Beta.Length, free, _factor))
+                break;
+            squared = FindStep(free);
+            if (squared <= SquaredStep)
+            {
+                Move(1);
+                LogLikelihood += squared / 2;
+                return Ascent.Reached;
+            }
+
+            double gain = TakeStep(likelihood);
+            if (double.IsNaN(gain))
+                break;
+            if (count < StepsBeforeDoubt)
+                continue;
+            if (free.Length == 1 && likelihood.NeverFallsAlong(Step, 0))
+                return Ascent.Endless;
+            if (gain < NoGain && likelihood.NeverFallsAlong(Step, DirectionTolerance))
+                return Ascent.Endless;
+        }
+
+        if (squared <= SquaredStepOfRounding)
+            return Ascent.Reached;
+        return likelihood.NeverFallsAlong(Step, DirectionTolerance) ? Ascent.Endless : Ascent.Lost;
+    }
+
+    // Newton's step into Step; answers its squared length in standard errors.
+    private readonly double FindStep(ReadOnlySpan<int> free)
+    {
+        Span<double> newton = _newton[..free.Length];
+        for (int i = 0; i < free.Length; i++)
+            newton[i] = Gradient[free[i]];
+        Cholesky.SolveLower(_factor, newton);
+        double squared = 0;
+        foreach (double entry in newton)
+            squared += entry * entry;
+        Cholesky.SolveUpper(_factor, newton);
+        Step.Clear();
+        for (int i = 0; i < free.Length; i++)
+            Step[free[i]] = newton[i];
+        return squared;
+    }
+
+    // Goes the step, or the largest half, quarter, … of it that does not fall; NaN where none does.
+    private double TakeStep(in ConditionalLikelihood likelihood)
+    {
+        double before = LogLikelihood, length = 1;
+        Beta.CopyTo(_before);
+        for (int halving = 0; halving < MostHalvings; halving++, length /= 2)
+        {
+            _before.CopyTo(Beta);
+            Move(length);
+            Evaluate(likelihood);
+            if (LogLikelihood >= before - (RoundingOfLikelihood * Math.Abs(before)))
+                return LogLikelihood - before;
+        }
+
+        return double.NaN;
+    }
+
+    private readonly void Move(double length)
+    {
+        for (int c = 0; c < Step.Length; c++)
+            Beta[c] += length * Step[c];
+    }
+}

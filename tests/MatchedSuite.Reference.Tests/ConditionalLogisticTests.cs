@@ -1,0 +1,78 @@
+using MatchedSuite.Statistics;
+using MatchedSuite.Statistics.Sets;
+
+namespace MatchedSuite.Reference.Tests;
+
+/// <summary>
+/// Exact conditional likelihood on infertility after abortion (Trichopoulos et al. 1976, 1:2) and endometrial cancer
+/// (Mack et al. 1976; Breslow and Day 1980, 1:4 and 1:1). Values: subset enumeration at 50 digits and the exact fit of R,
+/// both in Inputs/README.md.
+/// </summary>
+public class ConditionalLogisticTests
+{
+    // The stopping rule leaves about 1e-12 of a standard error. Likelihood-ratio p-values carry the rounding of a difference of
+    // log-likelihoods, about 1e-14 of their size, which a far tail multiplies.
+    private const double Promised = 1e-11;
+
+    [Theory]
+    [InlineData("infert", "clogit", "spontaneous", "induced")]
+    [InlineData("infert", "clogit", "induced", "spontaneous")]
+    [InlineData("infert", "clogit_spontaneous", "spontaneous")]
+    [InlineData("infert", "clogit_induced", "induced")]
+    [InlineData("bdendo", "clogit_est", "est")]
+    [InlineData("bdendo", "clogit_gall", "gall")]
+    [InlineData("bdendo", "clogit_hyp", "hyp")]
+    [InlineData("bdendo", "clogit_non", "non")]
+    [InlineData("bdendo", "clogit_est_gall", "est", "gall")]
+    [InlineData("bdendo", "clogit_est_gall", "gall", "est")]
+    [InlineData("bdendo", "clogit_four", "gall", "hyp", "est", "non")]
+    [InlineData("bdendo", "clogit_four", "non", "gall", "hyp", "est")]
+    [InlineData("bdendo", "clogit_ob_missing_dropped", "ob")]
+    [InlineData("bdendo11", "clogit_est", "est")]
+    [InlineData("bdendo11", "clogit_gall", "gall")]
+    [InlineData("bdendo11", "clogit_hyp", "hyp")]
+    public void Every_quantity_of_the_fit_agrees(string dataset, string @case, string endpoint, params string[] covariates)
+    {
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        SetSample sets = ReferenceSets.Of(dataset, endpoint, frame, covariates);
+        var coefficients = new double[covariates.Length + 1];
+        var errors = new double[covariates.Length + 1];
+        ConditionalLogisticFit fit = ConditionalLogistic.Fit(sets, TestOptions.Default, scratch, coefficients, errors);
+        TestResult result = ConditionalLogistic.Run(sets, TestOptions.Default, scratch);
+        int made = 0;
+
+        Check(fit.NullLogLikelihood, "loglik_null");
+        Check(fit.LogLikelihood, "loglik");
+        Check(fit.OverallLikelihoodRatio.Statistic, "lr_chi2");
+        Check(fit.OverallLikelihoodRatio.DegreesOfFreedom, "lr_df");
+        Check(fit.OverallLikelihoodRatio.P.Value, "lr_p");
+        Check(fit.OverallWald.Statistic, "wald_chi2");
+        Check(fit.OverallWald.P.Value, "wald_p");
+        Check(fit.OverallScore.Statistic, "score_chi2");
+        Check(fit.OverallScore.P.Value, "score_p");
+        Check(fit.Sets, "n_informative_sets");
+        Check(fit.Samples + sets.Lost.MembersOfLostSets, "n_used");
+        Check(sets.IndexCounts.ToArray().Sum(), "n_events");
+        Check(result.Estimate, "coef." + endpoint);
+        Check(result.StandardError, "se." + endpoint);
+        Check(result.Statistic, "z." + endpoint);
+        Check(result.P.Value, "p." + endpoint);
+        Check(Math.Exp(result.Estimate), "or." + endpoint);
+        Check(Math.Exp(result.Interval.Low), "or95_lo." + endpoint);
+        Check(Math.Exp(result.Interval.High), "or95_hi." + endpoint);
+        for (int c = 0; c < covariates.Length; c++)
+        {
+            Check(coefficients[c], "coef." + covariates[c]);
+            Check(errors[c], "se." + covariates[c]);
+        }
+
+        Assert.Equal(19 + (2 * covariates.Length), made);
+
+        void Check(double actual, string quantity)
+        {
+            Expected.Check(actual, dataset, @case, quantity, atLeast: Promised);
+            made++;
+        }
+    }
+}
