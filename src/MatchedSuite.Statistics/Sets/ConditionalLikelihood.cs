@@ -11,12 +11,14 @@ namespace MatchedSuite.Statistics.Sets;
 /// </remarks>
 internal readonly ref struct ConditionalLikelihood
 {
+    private readonly SingleChoiceTiles _tiles;
     private readonly SingleChoices _singles;
     private readonly SubsetChoices _subsets;
 
-    private ConditionalLikelihood(SingleChoices singles, SubsetChoices subsets, int columns)
+    private ConditionalLikelihood(SingleChoiceTiles tiles, SubsetChoices subsets, int columns, in Scratch.Frame frame)
     {
-        _singles = singles;
+        _tiles = tiles;
+        _singles = new SingleChoices(tiles, frame);
         _subsets = subsets;
         Columns = columns;
     }
@@ -30,7 +32,7 @@ internal readonly ref struct ConditionalLikelihood
     /// <param name="columns">Number of columns.</param>
     /// <param name="frame">Working memory that outlives the answer.</param>
     public static ConditionalLikelihood Of(in SetSample sets, ReadOnlySpan<double> design, int columns, in Scratch.Frame frame) =>
-        new(SingleChoices.Of(sets, design, columns, frame), SubsetChoices.Of(sets, design, columns, frame), columns);
+        new(SingleChoiceTiles.Of(sets, design, columns, frame), SubsetChoices.Of(sets, design, columns, frame), columns, frame);
 
     /// <summary>The log-likelihood at <paramref name="beta"/>, with gradient and information (minus the second derivatives).</summary>
     /// <param name="beta">One coefficient a column.</param>
@@ -58,7 +60,7 @@ internal readonly ref struct ConditionalLikelihood
     /// <summary>Smallest and largest lead of members not chosen over chosen ones along a direction; 0 where all are level.</summary>
     public (double Smallest, double Largest) RangeAlong(ReadOnlySpan<double> direction)
     {
-        var singles = _singles.RangeAlong(direction);
+        var singles = _tiles.RangeAlong(direction);
         var subsets = _subsets.RangeAlong(direction);
         return (Math.Min(singles.Smallest, subsets.Smallest), Math.Max(singles.Largest, subsets.Largest));
     }
@@ -67,5 +69,5 @@ internal readonly ref struct ConditionalLikelihood
     /// The log-likelihood of a single column where its coefficient goes to infinity and it never falls on the way: minus the
     /// sum of the logarithms of how many subsets stand as high as the chosen one.
     /// </summary>
-    public double LimitAlong(double direction) => _singles.LimitAlong(direction) + _subsets.LimitAlong(direction);
+    public double LimitAlong(double direction) => _tiles.LimitAlong(direction) + _subsets.LimitAlong(direction);
 }

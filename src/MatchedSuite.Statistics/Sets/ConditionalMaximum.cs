@@ -1,18 +1,5 @@
 namespace MatchedSuite.Statistics.Sets;
 
-/// <summary>How a climb to the maximum of the conditional likelihood ended.</summary>
-internal enum Ascent
-{
-    /// <summary>At the maximum.</summary>
-    Reached,
-
-    /// <summary>The likelihood rises for ever; <see cref="ConditionalMaximum.Step"/> is a direction along which it does.</summary>
-    Endless,
-
-    /// <summary>Neither was established.</summary>
-    Lost,
-}
-
 /// <summary>A point of the conditional likelihood and the climb from it by Newton's method with step halving.</summary>
 /// <remarks>
 /// The log-likelihood is concave, so a step that is halved until it does not fall leads to the maximum or along a direction of

@@ -43,7 +43,7 @@ internal readonly ref struct SubsetChoices
     }
 
     /// <summary>Lays the sets out.</summary>
-    /// <param name="sets">The sets; those that <see cref="SingleChoices"/> takes are passed over.</param>
+    /// <param name="sets">The sets; those that <see cref="SingleChoiceTiles"/> takes are passed over.</param>
     /// <param name="design">Columns one after another, one value a member.</param>
     /// <param name="columns">Number of columns.</param>
     /// <param name="frame">Working memory that outlives the answer.</param>
@@ -53,7 +53,7 @@ internal readonly ref struct SubsetChoices
         for (int s = 0; s < sets.Sets; s++)
         {
             int members = sets.Starts[s + 1] - sets.Starts[s];
-            if (SingleChoices.Takes(members, sets.IndexCounts[s]))
+            if (SingleChoiceTiles.Takes(members, sets.IndexCounts[s]))
                 continue;
             count++;
             total += members;
@@ -67,7 +67,7 @@ internal readonly ref struct SubsetChoices
         for (int s = 0, taken = 0; s < sets.Sets; s++)
         {
             int from = sets.Starts[s], to = sets.Starts[s + 1], index = sets.IndexCounts[s];
-            if (SingleChoices.Takes(to - from, index))
+            if (SingleChoiceTiles.Takes(to - from, index))
                 continue;
             bool indexIsChosen = 2 * index <= to - from;
             chosen[taken] = indexIsChosen ? index : to - from - index;
