@@ -89,7 +89,8 @@ internal ref struct ConditionalMaximum
                 break;
             if (count < StepsBeforeDoubt)
                 continue;
-            if (free.Length == 1 && likelihood.NeverFallsAlong(Step, 0))
+            // For a single column the limit has a closed form; otherwise the gain must have died away.
+            if (Beta.Length == 1 && likelihood.NeverFallsAlong(Step, 0))
                 return Ascent.Endless;
             if (gain < NoGain && likelihood.NeverFallsAlong(Step, DirectionTolerance))
                 return Ascent.Endless;
