@@ -54,4 +54,7 @@ public enum Remarks : long
 
     /// <summary>The null distribution was sampled by random relabelings.</summary>
     Resampled = 1 << 15,
+
+    /// <summary>The method does not adjust for covariates; the result is unadjusted although covariates were given.</summary>
+    Unadjusted = 1 << 16,
 }

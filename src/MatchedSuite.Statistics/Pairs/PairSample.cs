@@ -8,9 +8,6 @@ namespace MatchedSuite.Statistics.Pairs;
 /// </remarks>
 public readonly ref struct PairSample
 {
-    // Subtraction of two decimals rounded to binary is off by at most a few units in the last place of the larger.
-    private const double UnitsInLastPlace = 4;
-
     private PairSample(
         ReadOnlySpan<double> index, ReadOnlySpan<double> reference, ReadOnlySpan<double> differences, ReadOnlySpan<double> roundings)
     {
@@ -49,11 +46,9 @@ public readonly ref struct PairSample
         for (int i = 0; i < n; i++)
         {
             differences[i] = index[i] - reference[i];
-            roundings[i] = UnitsInLastPlace * UnitInLastPlace(Math.Max(Math.Abs(index[i]), Math.Abs(reference[i])));
+            roundings[i] = DecimalRounding.Of(Math.Max(Math.Abs(index[i]), Math.Abs(reference[i])));
         }
 
         return new PairSample(index, reference, differences, roundings);
     }
-
-    private static double UnitInLastPlace(double magnitude) => Math.BitIncrement(magnitude) - magnitude;
 }

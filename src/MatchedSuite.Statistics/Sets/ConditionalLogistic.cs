@@ -87,8 +87,9 @@ public static class ConditionalLogistic
         Span<double> coefficients,
         Span<double> standardErrors)
     {
+        Require.OpenUnitInterval(options.Confidence);
         if (sets.Sets == 0)
-            return new ConditionalLogisticFit { Outcome = Outcome.TooFewSets };
+            return new ConditionalLogisticFit { Outcome = Outcome.TooFewSets, Remarks = Remarks.TooFewSets };
         using Scratch.Frame frame = scratch.Open();
         ReadOnlySpan<double> design = sets.Values;
         if (sets.CovariateCount > 0)

@@ -60,7 +60,7 @@ public static class ConditionalLogisticCategories
         Require.OneEntryAColumn(coefficients.Length, columns);
         Require.OneEntryAColumn(standardErrors.Length, columns);
         if (sets.Sets == 0)
-            return new ConditionalLogisticFit { Outcome = Outcome.TooFewSets };
+            return new ConditionalLogisticFit { Outcome = Outcome.TooFewSets, Remarks = Remarks.TooFewSets };
 
         using Scratch.Frame frame = scratch.Open();
         Span<double> design = frame.Doubles(columns * sets.Members);
