@@ -12,6 +12,12 @@ public sealed record TestOptions
     /// <summary>Coverage of the intervals, strictly between 0 and 1.</summary>
     public double Confidence { get; init; } = 0.95;
 
+    /// <summary>Random relabelings or sign flips where not all of them are listed; at least 1.</summary>
+    public int Resamples { get; init; } = 9999;
+
+    /// <summary>Seed of everything random; the same seed gives the same numbers on every machine.</summary>
+    public long Seed { get; init; }
+
     /// <summary>
     /// Probability left outside at one end of an interval: half of 1 − confidence when two-sided, all of it when one-sided.
     /// So the interval excludes the null value exactly when p &lt; 1 − confidence.

@@ -75,4 +75,32 @@ public class ConditionalLogisticTests
             made++;
         }
     }
+
+    [Theory]
+    [InlineData("approval_2x2")]
+    [InlineData("hodgkin_2x2")]
+    [InlineData("endometrial_1to1_est")]
+    [InlineData("equal_discordant")]
+    public void Discordant_pairs_give_the_matched_odds_ratio_and_McNemars_statistic_as_score_test(string dataset)
+    {
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        SetSample sets = ReferenceSets.OfDiscordantPairs(dataset, frame);
+        ConditionalLogisticFit fit = ConditionalLogistic.Fit(sets, TestOptions.Default, scratch);
+        Expected.Check(Math.Exp(fit.Estimate), dataset, "matched_or", "or");
+        Expected.Check(Math.Exp(fit.Interval.Low), dataset, "matched_or", "wald95_lo", Promised);
+        Expected.Check(Math.Exp(fit.Interval.High), dataset, "matched_or", "wald95_hi", Promised);
+        Expected.Check(fit.Score.Statistic, dataset, "mcnemar", "chi2");
+        Expected.Check(fit.Score.P.Value, dataset, "mcnemar", "p_chi2");
+    }
+
+    [Fact]
+    public void A_single_discordant_pair_separates_the_roles()
+    {
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        ConditionalLogisticFit fit = ConditionalLogistic.Fit(ReferenceSets.OfDiscordantPairs("zero_cell", frame), TestOptions.Default, scratch);
+        Expected.Check(Math.Exp(fit.Estimate), "zero_cell", "matched_or", "or");
+        Assert.Equal((Remarks.Separated, double.NegativeInfinity), (fit.Remarks, fit.Interval.Low));
+    }
 }

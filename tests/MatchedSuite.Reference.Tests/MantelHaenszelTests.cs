@@ -26,4 +26,21 @@ public class MantelHaenszelTests
         Expected.Check(Math.Exp(result.Interval.Low), "bdendo", @case, "rbg95_lo");
         Expected.Check(Math.Exp(result.Interval.High), "bdendo", @case, "rbg95_hi");
     }
+
+    [Theory]
+    [InlineData("approval_2x2")]
+    [InlineData("hodgkin_2x2")]
+    [InlineData("endometrial_1to1_est")]
+    [InlineData("equal_discordant")]
+    public void Pairs_give_the_matched_odds_ratio_and_McNemars_test(string dataset)
+    {
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        TestResult result = MantelHaenszel.Run(ReferenceSets.OfDiscordantPairs(dataset, frame), TestOptions.Default, scratch);
+        Expected.Check(Math.Exp(result.Estimate), dataset, "matched_or", "or");
+        Expected.Check(Math.Exp(result.Interval.Low), dataset, "matched_or", "wald95_lo");
+        Expected.Check(Math.Exp(result.Interval.High), dataset, "matched_or", "wald95_hi");
+        Expected.Check(result.Statistic, dataset, "mcnemar", "chi2");
+        Expected.Check(result.P.Value, dataset, "mcnemar", "p_chi2");
+    }
 }

@@ -19,4 +19,16 @@ internal static class ReferenceSets
         return SetSample.Of(
             [.. order.Select(row => values[row])], starts, [.. order.Select(row => roles[row] == 1)], columns, frame);
     }
+
+    /// <summary>The discordant pairs of a 2×2 table as 1:1 sets: b with 1 in the index role and 0 in the other, c the reverse.</summary>
+    public static SetSample OfDiscordantPairs(string dataset, in Scratch.Frame frame)
+    {
+        int b = (int)Expected.Value(dataset, "mcnemar", "b"), c = (int)Expected.Value(dataset, "mcnemar", "c");
+        double[] values = [.. Enumerable.Repeat(new double[] { 1, 0 }, b).Concat(Enumerable.Repeat(new double[] { 0, 1 }, c)).SelectMany(pair => pair)];
+        return SetSample.Of(
+            values,
+            [.. Enumerable.Range(0, b + c + 1).Select(s => 2 * s)],
+            [.. Enumerable.Range(0, values.Length).Select(i => i % 2 == 0)],
+            frame);
+    }
 }
