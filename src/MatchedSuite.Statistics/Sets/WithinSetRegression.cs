@@ -123,7 +123,7 @@ internal readonly ref struct WithinSetRegression
     public TestResult Test(in SetSample sets, TestOptions options, double error, int df)
     {
         double t = Estimate / error;
-        double reach = error * StudentTQuantiles.For(options.TailShare).At(df);
+        double reach = error * StudentTQuantiles.Upper(options.TailShare, df);
         return new TestResult
         {
             Sets = sets.Sets,
