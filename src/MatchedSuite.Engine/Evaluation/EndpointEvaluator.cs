@@ -24,29 +24,33 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
     /// <param name="values">The endpoint's values in the order of the arrangement's rows, NaN where missing; changed in place by the transform.</param>
     /// <param name="endpoint">What is known of the endpoint.</param>
     /// <param name="position">The endpoint's position within its block, written into the rows.</param>
-    /// <param name="rows">Where the rows go.</param>
+    /// <param name="output">Where rows and details go.</param>
     /// <exception cref="Storage.RefusalException">A value does not fit the endpoint's kind.</exception>
-    public void Evaluate(Span<double> values, EndpointInfo endpoint, int position, RowBuffer rows)
+    public void Evaluate(Span<double> values, EndpointInfo endpoint, int position, BlockOutput output)
     {
         KindCheck.Run(values, endpoint, plan);
-        int before = rows.Count;
-        AddRows(values, endpoint, rows, out int undefined);
+        int rowsBefore = output.Rows.Count;
+        int detailsBefore = output.Details.Count;
+        AddRows(values, endpoint, output, out int undefined);
         if (undefined > 0)
         {
             UndefinedValues += undefined;
             EndpointsWithUndefinedValues++;
         }
 
-        foreach (ref ResultRow row in rows.Rows[before..])
+        foreach (ref ResultRow row in output.Rows.Records[rowsBefore..])
         {
             row.Endpoint = position;
             if (undefined > 0)
                 row.Remarks |= Remarks.TransformUndefined;
         }
+
+        foreach (ref DetailRow detail in output.Details.Records[detailsBefore..])
+            detail.Endpoint = position;
     }
 
-    /// <summary>Adds the endpoint's rows, and says how many of its values had no transform.</summary>
-    protected abstract void AddRows(Span<double> values, EndpointInfo endpoint, RowBuffer rows, out int undefined);
+    /// <summary>Adds the endpoint's rows and details, and says how many of its values had no transform.</summary>
+    protected abstract void AddRows(Span<double> values, EndpointInfo endpoint, BlockOutput output, out int undefined);
 
     /// <summary>Why an endpoint with so few or so incomplete sets is not tested; null where it is.</summary>
     /// <param name="designed">Sets that the matching gives.</param>

@@ -10,7 +10,7 @@ namespace MatchedSuite.Engine.Evaluation;
 internal sealed class PairsEvaluator(AnalysisPlan plan, PairsDesign design) : EndpointEvaluator(plan)
 {
     /// <inheritdoc/>
-    protected override void AddRows(Span<double> values, EndpointInfo endpoint, RowBuffer rows, out int undefined)
+    protected override void AddRows(Span<double> values, EndpointInfo endpoint, BlockOutput output, out int undefined)
     {
         undefined = 0;
         for (short contrast = 0; contrast < design.Comparisons.Count; contrast++)
@@ -22,17 +22,17 @@ internal sealed class PairsEvaluator(AnalysisPlan plan, PairsDesign design) : En
             places.Index.Gather(values, index);
             places.Reference.Gather(values, reference);
             undefined += ValueTransform.Apply(endpoint.Transform, index) + ValueTransform.Apply(endpoint.Transform, reference);
-            int before = rows.Count;
-            AddRows(index, reference, endpoint, ResultRow.AllStrata, rows);
+            int before = output.Rows.Count;
+            AddRows(index, reference, endpoint, ResultRow.AllStrata, output);
             for (short stratum = 0; stratum < Plan.Arrangement.Strata.Length; stratum++)
-                AddRows(index, reference, endpoint, stratum, rows);
-            foreach (ref ResultRow row in rows.Rows[before..])
+                AddRows(index, reference, endpoint, stratum, output);
+            foreach (ref ResultRow row in output.Rows.Records[before..])
                 row.Contrast = contrast;
         }
     }
 
     private void AddRows(
-        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, EndpointInfo endpoint, short stratum, RowBuffer rows)
+        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, EndpointInfo endpoint, short stratum, BlockOutput output)
     {
         using Scratch.Frame frame = Scratch.Open();
         Span<double> completeIndex = frame.Doubles(index.Length);
@@ -56,7 +56,7 @@ internal sealed class PairsEvaluator(AnalysisPlan plan, PairsDesign design) : En
         PairSample pairs = PairSample.Of(completeIndex[..complete], completeReference[..complete], frame);
         foreach (PlannedMethod planned in design.MethodsFor(endpoint.Kind))
         {
-            ref ResultRow row = ref rows.Add();
+            ref ResultRow row = ref output.Rows.Add();
             row.Stratum = stratum;
             row.Method = planned.Code;
             row.Primary = planned.IsPrimary ? (short)1 : (short)0;

@@ -89,7 +89,7 @@ internal sealed class ResultColumns
         cells.Text(WrittenName.Of(endpoint.Kind));
         cells.Text(endpoint.Family);
         cells.Text(_plan.Contrasts[row.Contrast]);
-        cells.Text(row.Stratum == ResultRow.AllStrata ? "" : _plan.Arrangement.Strata[row.Stratum]);
+        cells.Text(_plan.StratumName(row.Stratum));
         cells.Text(_plan.MethodNames[row.Method]);
         cells.Truth(row.Primary == 1);
     }

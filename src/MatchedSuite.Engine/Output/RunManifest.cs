@@ -104,7 +104,7 @@ internal static class RunManifest
         {
             json.WriteStartObject();
             json.WriteString("contrast", run.Plan.Contrasts[group.Contrast]);
-            json.WriteString("stratum", group.Stratum == Rows.ResultRow.AllStrata ? "" : run.Plan.Arrangement.Strata[group.Stratum]);
+            json.WriteString("stratum", run.Plan.StratumName(group.Stratum));
             json.WriteString("method", group.Method == HypothesisGroup.PrimaryMethods ? "primary" : run.Plan.MethodNames[group.Method]);
             if (group.Family is { } family)
                 json.WriteString("family", family);

@@ -1,5 +1,6 @@
 using MatchedSuite.Engine.Evaluation;
 using MatchedSuite.Engine.Methods;
+using MatchedSuite.Engine.Rows;
 using MatchedSuite.Engine.Running;
 using MatchedSuite.Statistics;
 using MatchedSuite.Study.Definition;
@@ -56,6 +57,14 @@ public sealed class AnalysisPlan
 
     /// <summary>An evaluator for one worker.</summary>
     public EndpointEvaluator NewEvaluator() => _design.NewEvaluator(this);
+
+    /// <summary>Name of a stratum as the results write it: empty for all sets, <c>difference</c> for the test between strata.</summary>
+    public string StratumName(short stratum) => stratum switch
+    {
+        ResultRow.AllStrata => "",
+        ResultRow.BetweenStrata => "difference",
+        _ => Arrangement.Strata[stratum],
+    };
 
     /// <summary>Name of a used sample, by its position in a row of values.</summary>
     public string SampleName(int position) => _samples[SourceColumns[position]];

@@ -10,13 +10,16 @@ public struct ResultRow
     /// <summary>Stratum code of a row over all sets.</summary>
     public const short AllStrata = -1;
 
+    /// <summary>Stratum code of a test between strata.</summary>
+    public const short BetweenStrata = -2;
+
     /// <summary>Position of the endpoint in the order of the data.</summary>
     public int Endpoint;
 
     /// <summary>Position of the contrast in the plan.</summary>
     public short Contrast;
 
-    /// <summary>Position of the stratum in the plan, or <see cref="AllStrata"/>.</summary>
+    /// <summary>Position of the stratum in the plan, <see cref="AllStrata"/> or <see cref="BetweenStrata"/>.</summary>
     public short Stratum;
 
     /// <summary>Position of the method in the plan.</summary>

@@ -75,16 +75,17 @@ public sealed class AnalysisRun
     private FinishedRun Analyse(StudyInputs inputs, CancellationToken cancellation)
     {
         AnalysisPlan plan = new AnalysisPlan(inputs);
-        using var rows = new RowStore(_folder.Partial);
-        EndpointStream stream = EndpointStream.Run(plan, inputs.Source, rows, _options, _observer, cancellation);
+        using var store = new ResultStore(_folder.Partial);
+        EndpointStream stream = EndpointStream.Run(plan, inputs.Source, store, _options, _observer, cancellation);
         RefuseNoEndpoints(stream);
         WarnOfStream(stream, plan);
         _execution.StepDone("tests");
 
-        AdjustedColumns adjusted = RowAdjuster.Run(rows, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]).Family);
+        AdjustedColumns adjusted = RowAdjuster.Run(store.Rows, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]).Family);
         _execution.StepDone("adjustment");
-        var tables = new ResultTables(rows, adjusted, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]));
+        var tables = new ResultTables(store.Rows, adjusted, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]));
         tables.WriteResults(_folder);
+        DetailTable.Write(_folder, store.Details, plan, stream.Names);
         SummaryOrder summary = tables.WriteSummary(_folder);
         tables.WriteUntested(_folder);
         _execution.StepDone("tables");

@@ -1,4 +1,4 @@
-using MatchedSuite.Engine.Rows;
+using MatchedSuite.Engine.Evaluation;
 
 namespace MatchedSuite.Engine.Running;
 
@@ -14,8 +14,8 @@ internal sealed class BlockResult
     /// <summary>Names of the block's endpoints.</summary>
     public List<string> Names { get; } = [];
 
-    /// <summary>The rows; an endpoint is named by its position in <see cref="Names"/>.</summary>
-    public RowBuffer Rows { get; } = new();
+    /// <summary>Rows and details; an endpoint is named by its position in <see cref="Names"/>.</summary>
+    public BlockOutput Output { get; } = new();
 
     /// <summary>Values that had no transform.</summary>
     public long UndefinedValues { get; set; }
@@ -27,7 +27,7 @@ internal sealed class BlockResult
     public void Clear()
     {
         Names.Clear();
-        Rows.Clear();
+        Output.Clear();
         UndefinedValues = 0;
         EndpointsWithUndefinedValues = 0;
     }

@@ -5,19 +5,19 @@ using MatchedSuite.Storage.Values;
 
 namespace MatchedSuite.Engine.Running;
 
-/// <summary>Streams every endpoint through the plan's methods into a store of rows.</summary>
+/// <summary>Streams every endpoint through the plan's methods into a store.</summary>
 internal sealed class EndpointStream
 {
     private const int MostEndpointsPerBlock = 1024;
     private readonly AnalysisPlan _plan;
-    private readonly RowStore _rows;
+    private readonly ResultStore _store;
     private readonly IRunObserver _observer;
     private readonly HashSet<string> _known = new(StringComparer.Ordinal);
 
-    private EndpointStream(AnalysisPlan plan, RowStore rows, IRunObserver observer)
+    private EndpointStream(AnalysisPlan plan, ResultStore store, IRunObserver observer)
     {
         _plan = plan;
-        _rows = rows;
+        _store = store;
         _observer = observer;
     }
 
@@ -32,9 +32,9 @@ internal sealed class EndpointStream
 
     /// <summary>Runs the stream to its end.</summary>
     public static EndpointStream Run(
-        AnalysisPlan plan, EndpointSource source, RowStore rows, RunOptions options, IRunObserver observer, CancellationToken cancellation)
+        AnalysisPlan plan, EndpointSource source, ResultStore store, RunOptions options, IRunObserver observer, CancellationToken cancellation)
     {
-        var stream = new EndpointStream(plan, rows, observer);
+        var stream = new EndpointStream(plan, store, observer);
         var selection = new EndpointSelection(plan.SourceColumns, plan.Catalogue.Wanted, BlockSize(plan, options));
         using var pipeline = new BlockPipeline(
             source.Blocks(selection), () => new EvaluationWorker(plan), stream.Commit, options.Threads);
@@ -65,10 +65,13 @@ internal sealed class EndpointStream
             }
         }
 
-        foreach (ref ResultRow row in block.Rows.Rows)
+        foreach (ref ResultRow row in block.Output.Rows.Records)
             row.Endpoint += Names.Count;
+        foreach (ref DetailRow detail in block.Output.Details.Records)
+            detail.Endpoint += Names.Count;
         Names.AddRange(block.Names);
-        _rows.Append(block.Rows.Rows);
+        _store.Rows.Append(block.Output.Rows.Records);
+        _store.Details.Append(block.Output.Details.Records);
         UndefinedValues += block.UndefinedValues;
         EndpointsWithUndefinedValues += block.EndpointsWithUndefinedValues;
         _observer.Progress(block.Reached, Names.Count);

@@ -17,7 +17,7 @@ internal sealed class EvaluationWorker(AnalysisPlan plan) : IBlockWorker
         for (int endpoint = 0; endpoint < block.Count; endpoint++)
         {
             result.Names.Add(block.Names[endpoint]);
-            _evaluator.Evaluate(block.Values(endpoint), plan.Catalogue.Describe(block.Names[endpoint]), endpoint, result.Rows);
+            _evaluator.Evaluate(block.Values(endpoint), plan.Catalogue.Describe(block.Names[endpoint]), endpoint, result.Output);
         }
 
         result.UndefinedValues = _evaluator.UndefinedValues - undefinedBefore;
