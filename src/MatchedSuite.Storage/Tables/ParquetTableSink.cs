@@ -9,12 +9,15 @@ namespace MatchedSuite.Storage.Tables;
 /// <remarks>The same rows give the same bytes, in whatever batches they come.</remarks>
 public sealed class ParquetTableSink : ITableSink
 {
-    // Thirty columns of so many rows are about 20 MB in memory.
-    private const int RowsPerGroup = 1 << 16;
+    // Rows that wait for their row group, over all columns: 32 MB at 16 bytes a cell.
+    private const int CellsPerGroup = 1 << 21;
+    private const int FewestRowsPerGroup = 16;
+    private const int MostRowsPerGroup = 1 << 16;
 
     private readonly WrittenFile _file;
     private readonly ParquetWriter _writer;
     private readonly ColumnBuffer[] _buffers;
+    private readonly int _rowsPerGroup;
     private int _rows;
 
     /// <summary>Begins the file, replacing one of that name.</summary>
@@ -22,7 +25,8 @@ public sealed class ParquetTableSink : ITableSink
     public ParquetTableSink(string path, IReadOnlyList<TableColumn> schema)
     {
         ArgumentNullException.ThrowIfNull(schema);
-        _buffers = [.. schema.Select((column, index) => ColumnBuffer.Of(column, index, RowsPerGroup))];
+        _rowsPerGroup = Math.Clamp(CellsPerGroup / Math.Max(1, schema.Count), FewestRowsPerGroup, MostRowsPerGroup);
+        _buffers = [.. schema.Select((column, index) => ColumnBuffer.Of(column, index, _rowsPerGroup))];
         _file = new WrittenFile(path);
         // The writer's own default level is the smallest size, which takes thirty times as long for nearly the same size.
         var options = new ParquetOptions { CompressionMethod = CompressionMethod.Zstd, CompressionLevel = CompressionLevel.Fastest };
@@ -40,11 +44,11 @@ public sealed class ParquetTableSink : ITableSink
         ArgumentNullException.ThrowIfNull(batch);
         for (int first = 0; first < batch.Rows;)
         {
-            int count = Math.Min(batch.Rows - first, RowsPerGroup - _rows);
+            int count = Math.Min(batch.Rows - first, _rowsPerGroup - _rows);
             foreach (ColumnBuffer buffer in _buffers) buffer.Take(batch, first, count, _rows);
             first += count;
             _rows += count;
-            if (_rows == RowsPerGroup) _file.Guarded(WriteGroup);
+            if (_rows == _rowsPerGroup) _file.Guarded(WriteGroup);
         }
     }
 
