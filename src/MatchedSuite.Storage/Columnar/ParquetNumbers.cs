@@ -47,8 +47,18 @@ internal static class ParquetNumbers
 
     private static void Doubles(ParquetRowGroupReader reader, DataField field, int rows, double[] target)
     {
-        if (field.IsNullable) Convert<double>(reader, field, rows, target);
-        else Completed.Wait(reader.ReadAsync(field, target.AsMemory(0, rows)));
+        if (!field.IsNullable)
+        {
+            Completed.Wait(reader.ReadAsync(field, target.AsMemory(0, rows)));
+            return;
+        }
+        int[] levels = ArrayPool<int>.Shared.Rent(rows);
+        Completed.Wait(reader.ReadRawAsync(field, target.AsMemory(0, rows), levels.AsMemory(0, rows), null));
+        int present = levels.AsSpan(0, rows).Count(field.MaxDefinitionLevel);
+        // From the end, so that no packed value is overwritten before it has moved to its row; done when no missing row is left before it.
+        for (int row = rows - 1; present <= row; row--)
+            target[row] = levels[row] == field.MaxDefinitionLevel ? target[--present] : double.NaN;
+        ArrayPool<int>.Shared.Return(levels);
     }
 
     private static void Convert<T>(ParquetRowGroupReader reader, DataField field, int rows, double[] target)

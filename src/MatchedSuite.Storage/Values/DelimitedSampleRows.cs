@@ -86,7 +86,13 @@ internal sealed class DelimitedSampleRows : EndpointSource
         }
         _endpoints = [.. endpoints];
         _spool = new SampleMajorSpool(selection.Samples.Length, _endpoints.Length, _options.Memory, _options.ScratchFolder);
-        ReadAll(chunk => Read(chunk, places, endpointOfColumn));
+        long rows = 0;
+        ReadAll(chunk =>
+        {
+            Read(chunk, places, endpointOfColumn);
+            Interlocked.Add(ref rows, chunk.Records);
+        });
+        if (rows != _samples.Length) throw Changed();
         _spooled = selection;
     }
 
@@ -136,8 +142,7 @@ internal sealed class DelimitedSampleRows : EndpointSource
         for (long sample = chunk.FirstRecord - 1; reader.MoveNext(); sample += reader.EndsRecord ? 1 : 0)
         {
             if (reader.EndsRecord) _text.RequireWidth(reader.FirstColumn + reader.Cells, reader.Line);
-            if (sample >= places.Length)
-                throw new RefusalException(_text.Place(reader.Line), "the file has grown while it was read", "a file that stays as it is");
+            if (sample >= places.Length) throw Changed();
             int place = places[sample];
             if (place < 0) continue;
             int cells = Math.Min(reader.Cells, endpointOfColumn.Length - reader.FirstColumn);
@@ -154,4 +159,8 @@ internal sealed class DelimitedSampleRows : EndpointSource
         }
         ArrayPool<double>.Shared.Return(values);
     }
+
+    private RefusalException Changed() =>
+        new(InputFile.ShortName(_options.Path), "the file has changed while it was read", "a file that stays as it is",
+            "Wait until it is whole, then run again.");
 }

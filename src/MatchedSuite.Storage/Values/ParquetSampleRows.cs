@@ -44,8 +44,14 @@ internal sealed class ParquetSampleRows : EndpointSource
         int[] places = SamplePlaces.Of(selection, _samples.Length);
         int[] wanted = [.. _endpointColumns.Where(column => selection.Wanted(_names[column]))];
         ParquetTable table = Rent();
-        foreach (int column in wanted) ParquetNumbers.Require(table, column);
-        _idle.Add(table);
+        try
+        {
+            foreach (int column in wanted) ParquetNumbers.Require(table, column);
+        }
+        finally
+        {
+            _idle.Add(table);
+        }
         return Cut(selection, places, wanted);
     }
 
@@ -89,10 +95,16 @@ internal sealed class ParquetSampleRows : EndpointSource
             target.Clear(selection.Samples.Length);
             ParquetTable table = source.Rent();
             double[] buffer = ArrayPool<double>.Shared.Rent(table.RowsOfGroup.Max());
-            foreach (int column in columns)
-                source.Read(table, column, places, buffer, target.Add(source._names[column]));
-            ArrayPool<double>.Shared.Return(buffer);
-            source._idle.Add(table);
+            try
+            {
+                foreach (int column in columns)
+                    source.Read(table, column, places, buffer, target.Add(source._names[column]));
+            }
+            finally
+            {
+                ArrayPool<double>.Shared.Return(buffer);
+                source._idle.Add(table);
+            }
         }
     }
 }

@@ -9,7 +9,8 @@ public abstract class PendingBlock
     /// <summary>Share of the input that lies before the end of this block, in [0, 1], for a progress bar.</summary>
     public required double Reached { get; init; }
 
-    /// <summary>Reads the block's values. Safe to call on another thread than the one that enumerates.</summary>
+    /// <summary>Reads the block's values, once. Safe to call on another thread than the one that enumerates.</summary>
+    /// <remarks>The block may be loaded after the enumeration has moved on or ended, but not after the next one has begun or the source is disposed.</remarks>
     /// <exception cref="RefusalException">A cell is not a number, a row is ragged, the file is damaged.</exception>
     public abstract void Load(EndpointBlock target);
 }

@@ -113,6 +113,16 @@ public sealed class DelimitedSampleRowsTests : IDisposable
                 Refused.By(() => Load(text.ToString(), threads), "samples.csv, line 50001, endpoint 'm1', sample 's49999'", "'bad' is not a number", "a decimal number");
     }
 
+    [Theory]
+    [InlineData("sample,crp\na,1\n")]
+    [InlineData("sample,crp\na,1\nb,2\nc,3\n")]
+    public void A_file_that_changes_between_its_two_readings_is_refused(string later)
+    {
+        using EndpointSource source = Open("sample,crp\na,1\nb,2\n");
+        _folder.Write("samples.csv", later);
+        Refused.By(() => _ = source.Blocks(Matrix.All(source, 10)).ToList(), "samples.csv", "the file has changed while it was read", "a file that stays as it is");
+    }
+
     /// <summary>Beyond 4 million characters a record is parsed in pieces; quoted names and cells lie across the cuts.</summary>
     [Theory]
     [InlineData(1 << 29)]
