@@ -154,6 +154,19 @@ public sealed class DelimitedSampleRowsTests : IDisposable
     }
 
     [Fact]
+    public void A_refusal_in_a_late_piece_names_the_endpoint_and_a_cell_beyond_a_piece_is_refused()
+    {
+        const int endpoints = 400_000;
+        string header = "sample," + string.Join(',', Enumerable.Range(0, endpoints).Select(endpoint => $"endpoint {endpoint}")) + "\n";
+        string values = string.Join(',', Enumerable.Repeat("0.123456789012", endpoints - 1));
+        Refused.By(() => Load($"{header}a,{values},1\nb,{values},high\n"), "samples.csv, line 3, endpoint 'endpoint 399999', sample 'b'",
+            "'high' is not a number", "a decimal number");
+        Refused.By(() => Load($"{header}a,{values}\n"), "samples.csv, line 2", "the line has 400000 cells", "400001 cells");
+        Refused.By(() => Load($"{header}a,{values},{new string('1', 300_000)}\n"), "samples.csv, line 2", "a cell is longer than 262144 characters", "shorter cells");
+        Assert.Equal([double.NaN], Load($"{header}a,{values},")[^1].Values);
+    }
+
+    [Fact]
     public void The_scratch_file_keeps_no_name_while_it_is_used_and_a_folder_that_cannot_hold_it_is_told()
     {
         using EndpointSource source = Open("sample,a,b\ns,1,2\nt,3,4\n", memory: 8);
