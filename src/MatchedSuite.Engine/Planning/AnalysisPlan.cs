@@ -25,7 +25,7 @@ public sealed class AnalysisPlan
         Options = new TestOptions { Sides = Study.Analysis.Sides, Confidence = Study.Analysis.Confidence };
         Adjustments = [.. Study.Analysis.Adjust.Select(AdjustmentTable.Named)];
         _samples = inputs.Source.Samples;
-        _design = DesignTable.Lay(Study, Arrangement);
+        _design = DesignTable.Lay(inputs);
     }
 
     /// <summary>The study.</summary>

@@ -1,5 +1,5 @@
+using MatchedSuite.Engine.Running;
 using MatchedSuite.Study.Definition;
-using MatchedSuite.Study.Matching;
 
 namespace MatchedSuite.Engine.Planning;
 
@@ -8,4 +8,4 @@ namespace MatchedSuite.Engine.Planning;
 /// <param name="Lay">Lays out a study's comparisons and methods.</param>
 /// <param name="MethodsFor">Names of the methods for a kind of endpoint, in the order in which they are listed to the user.</param>
 public sealed record DesignEntry(
-    DesignKind Kind, Func<StudyDefinition, Arrangement, IDesign> Lay, Func<EndpointKind, IReadOnlyList<string>> MethodsFor);
+    DesignKind Kind, Func<StudyInputs, IDesign> Lay, Func<EndpointKind, IReadOnlyList<string>> MethodsFor);

@@ -1,6 +1,6 @@
 using MatchedSuite.Engine.Methods;
+using MatchedSuite.Engine.Running;
 using MatchedSuite.Study.Definition;
-using MatchedSuite.Study.Matching;
 
 namespace MatchedSuite.Engine.Planning;
 
@@ -10,10 +10,10 @@ public static class DesignTable
     /// <summary>Every kind.</summary>
     public static IReadOnlyList<DesignEntry> All { get; } =
     [
-        new(DesignKind.Pairs, (study, arrangement) => new PairsDesign(study, arrangement), PairMethodTable.NamesFor),
+        new(DesignKind.Pairs, inputs => new PairsDesign(inputs), PairMethodTable.NamesFor),
     ];
 
     /// <summary>Lays out a study's comparisons and methods.</summary>
-    public static IDesign Lay(StudyDefinition study, Arrangement arrangement) =>
-        All.Single(entry => entry.Kind == study.Design.Kind).Lay(study, arrangement);
+    public static IDesign Lay(StudyInputs inputs) =>
+        All.Single(entry => entry.Kind == inputs.Study.Design.Kind).Lay(inputs);
 }

@@ -1,5 +1,6 @@
 using MatchedSuite.Engine.Evaluation;
 using MatchedSuite.Engine.Methods;
+using MatchedSuite.Engine.Running;
 using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Matching;
 
@@ -12,8 +13,10 @@ public sealed class PairsDesign : IDesign
     private readonly Dictionary<EndpointKind, PlannedMethod[]> _methods;
 
     /// <summary>Lays out a study of pairs.</summary>
-    public PairsDesign(StudyDefinition study, Arrangement arrangement)
+    public PairsDesign(StudyInputs inputs)
     {
+        StudyDefinition study = inputs.Study;
+        Arrangement arrangement = inputs.Audit.Arrangement;
         Comparisons = [new PairContrast(PairContrast.IndexReference, arrangement.Places[0], arrangement.Places[1])];
         Contrasts = [PairContrast.IndexReference];
         _methods = study.Analysis.Methods.ToDictionary(

@@ -56,7 +56,7 @@ public sealed class AnalysisRun
     {
         Task<IReadOnlyList<InputRecord>> fingerprints = Task.Run(() => InputRecord.OfAll(_study, cancellation), cancellation);
         _observer.Step($"reading {_study.Data.Samples}");
-        using StudyInputs inputs = StudyInputs.Open(_study, _options.Memory / 2, _folder.Partial);
+        using StudyInputs inputs = StudyInputs.Open(_study, _options, _folder.Partial);
         Warn(inputs.Audit.Warnings.Select(warning => warning.Text));
         AuditFiles.Write(_folder, inputs);
         auditPage(inputs, _folder);

@@ -23,7 +23,7 @@ public static class AuditRun
         StudyDefinition study = options.Override(StudyReader.Read(studyPath, Available.InThisVersion));
         observer.Step($"reading {study.Data.Samples}");
         var execution = new ExecutionRecord(options.Threads, options.Memory);
-        using StudyInputs inputs = StudyInputs.Open(study, options.Memory / 2, Path.GetTempPath());
+        using StudyInputs inputs = StudyInputs.Open(study, options, Path.GetTempPath());
         foreach (AuditWarning warning in inputs.Audit.Warnings)
         {
             if (options.Warnings == WarningRule.Refuse)

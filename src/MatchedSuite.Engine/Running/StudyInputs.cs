@@ -9,12 +9,11 @@ namespace MatchedSuite.Engine.Running;
 /// <summary>The tables a study names, opened: the sample sheet read, the measurements ready to stream, the matching audited.</summary>
 public sealed class StudyInputs : IDisposable
 {
-    private readonly string?[] _sampleNames;
 
     private StudyInputs(
-        StudyDefinition study, EndpointSource source, EndpointCatalogue catalogue, MatchingAudit audit, string?[] sampleNames)
+        StudyDefinition study, TextTable sheet, EndpointSource source, EndpointCatalogue catalogue, MatchingAudit audit)
     {
-        _sampleNames = sampleNames;
+        Sheet = sheet;
         Study = study;
         Source = source;
         Catalogue = catalogue;
@@ -23,6 +22,9 @@ public sealed class StudyInputs : IDisposable
 
     /// <summary>The study.</summary>
     public StudyDefinition Study { get; }
+
+    /// <summary>The sample sheet's linking columns.</summary>
+    public TextTable Sheet { get; }
 
     /// <summary>The measurements.</summary>
     public EndpointSource Source { get; }
@@ -46,18 +48,18 @@ public sealed class StudyInputs : IDisposable
 
     /// <summary>Opens and audits.</summary>
     /// <param name="study">The study.</param>
-    /// <param name="memory">Bytes that may be held for reordering values.</param>
+    /// <param name="options">Memory that may be held and threads that may read.</param>
     /// <param name="scratchFolder">Folder for scratch files.</param>
-    public static StudyInputs Open(StudyDefinition study, long memory, string scratchFolder)
+    public static StudyInputs Open(StudyDefinition study, RunOptions options, string scratchFolder)
     {
         IReadOnlySet<string> linking = LinkingColumns.Of(study);
         TextTable sheet = TextTable.Read(study.Data.Samples, study.Data.Dialect, linking.Contains);
         EndpointCatalogue catalogue = EndpointCatalogue.Read(study);
-        EndpointSource source = EndpointSource.Open(SourceOptions(study, linking, memory, scratchFolder));
+        EndpointSource source = EndpointSource.Open(SourceOptions(study, linking, options, scratchFolder));
         try
         {
             MatchingAudit audit = MatchingAudit.Of(study, sheet, study.Data.Values is null ? null : source.Samples);
-            return new StudyInputs(study, source, catalogue, audit, study.Data.Sample is { } key ? sheet[key] : []);
+            return new StudyInputs(study, sheet, source, catalogue, audit);
         }
         catch
         {
@@ -65,6 +67,9 @@ public sealed class StudyInputs : IDisposable
             throw;
         }
     }
+
+    /// <summary>Columns of the sheet as numbers over the used samples.</summary>
+    public SheetNumbers Numbers => new(Sheet, Study.Data.Dialect, Audit.Arrangement);
 
     /// <summary>Where the used samples stand in the file of measurements, in the order of the arrangement's rows.</summary>
     public int[] SourceColumns()
@@ -74,14 +79,15 @@ public sealed class StudyInputs : IDisposable
         var positions = new Dictionary<string, int>(StringComparer.Ordinal);
         for (int position = 0; position < Source.Samples.Count; position++)
             positions.Add(Source.Samples[position], position);
-        return [.. Audit.Arrangement.Rows.Select(row => positions[_sampleNames[row]!])];
+        string?[] names = Sheet[Study.Data.Sample!];
+        return [.. Audit.Arrangement.Rows.Select(row => positions[names[row]!])];
     }
 
     /// <inheritdoc/>
     public void Dispose() => Source.Dispose();
 
     private static EndpointSourceOptions SourceOptions(
-        StudyDefinition study, IReadOnlySet<string> linking, long memory, string scratchFolder) => new()
+        StudyDefinition study, IReadOnlySet<string> linking, RunOptions options, string scratchFolder) => new()
         {
             Path = study.Data.Values ?? study.Data.Samples,
             Layout = study.Data.Layout,
@@ -89,7 +95,8 @@ public sealed class StudyInputs : IDisposable
             EndpointColumn = study.Data.Endpoint,
             OtherColumns = linking,
             Dialect = study.Data.Dialect,
-            Memory = memory,
+            Memory = options.Memory / 2,
+            Threads = options.Threads,
             ScratchFolder = scratchFolder,
         };
 }

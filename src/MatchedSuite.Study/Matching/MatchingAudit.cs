@@ -49,7 +49,7 @@ public sealed record MatchingAudit
     public static MatchingAudit Of(StudyDefinition study, TextTable sheet, IReadOnlyList<string>? measured) =>
         study.Design switch
         {
-            { Kind: DesignKind.Pairs, Role: not null } => new PairsAudit(study, sheet, measured).Run(),
-            _ => throw new ArgumentException($"There is no audit for a design of kind '{WrittenName.Of(study.Design.Kind)}' without two roles.", nameof(study)),
+            { Kind: DesignKind.Pairs } => new PairsAudit(study, sheet, measured).Run(),
+            _ => throw new ArgumentException($"There is no audit for a design of kind '{WrittenName.Of(study.Design.Kind)}'.", nameof(study)),
         };
 }

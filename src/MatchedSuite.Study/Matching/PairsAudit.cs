@@ -11,7 +11,9 @@ internal sealed class PairsAudit
     private readonly SheetCells _cells;
     private readonly SampleNames _names;
     private readonly string?[] _sets;
+    private readonly string?[] _roleCells;
     private readonly string?[] _roles;
+    private readonly TwoGroups _groups;
     private readonly string?[]? _persons;
     private readonly string?[]? _strata;
     private readonly Disposition[] _dispositions;
@@ -30,7 +32,9 @@ internal sealed class PairsAudit
             _cells.Column(covariate, "design.covariates");
         if (design.PersonTime is { } time)
             _cells.Column(time, "design.person-time");
-        _roles = RoleCells.Of(_cells, design.Role!, "design.role");
+        _groups = design.Role ?? ExposureRoles.Groups(design.Exposure!);
+        _roleCells = design.Role is null ? _cells.Column(design.Exposure!, "design.exposure.column") : RoleCells.Of(_cells, design.Role, "design.role");
+        _roles = design.Role is null ? ExposureRoles.Of(_sets, _roleCells, _persons) : _roleCells;
         _names = SampleNames.Of(_cells, study.Data, measured);
         _dispositions = new Disposition[_cells.Rows];
     }
@@ -43,7 +47,7 @@ internal sealed class PairsAudit
         MatchPromise[] promises = [.. Design.MatchOn.Select(rule => new MatchPromise(rule, _cells, IsOfInterest))];
         MarkRows();
         MarkPersons();
-        List<PairMembers> sets = PairSets.Of(_dispositions, _sets, _roles, Design.Role!);
+        List<PairMembers> sets = PairSets.Of(_dispositions, _sets, _roles, _groups);
         SetShape[] shapes = PairSets.Shapes(sets);
         PairSets.Settle(sets, _dispositions, Design, _persons, _cells);
         List<PairMembers> pairs = Leave(sets, set => set.Complete, Disposition.NoPartner);
@@ -61,9 +65,9 @@ internal sealed class PairsAudit
         return new MatchingAudit
         {
             Dispositions = _dispositions,
-            AuditTable = [.. _dispositions.Select((disposition, row) => new AuditedRow(row + 1, _names[row], _sets[row], _roles[row], disposition))],
+            AuditTable = [.. _dispositions.Select((disposition, row) => new AuditedRow(row + 1, _names[row], _sets[row], _roleCells[row], disposition))],
             Counts = [.. Enum.GetValues<Disposition>().Select(kind => new DispositionCount(kind, Count(kind)))],
-            Arrangement = PairArrangement.Of(pairs, Design.Role!, _strata),
+            Arrangement = PairArrangement.Of(pairs, _groups, _strata),
             Shapes = shapes,
             Balance = [.. promises.Select(promise => promise.BalanceOf(pairs))],
             Breaches = breaches,
@@ -74,7 +78,7 @@ internal sealed class PairsAudit
         };
     }
 
-    private bool IsOfInterest(int row) => _roles[row] == Design.Role!.Index || _roles[row] == Design.Role!.Reference;
+    private bool IsOfInterest(int row) => _roles[row] == _groups.Index || _roles[row] == _groups.Reference;
 
     private void MarkRows()
     {
@@ -145,7 +149,7 @@ internal sealed class PairsAudit
         throw new RefusalException(
             _cells.File,
             $"{reason} (rows: {flow})",
-            $"at least one value of '{Design.Set}' with one sample '{Design.Role!.Index}' and one '{Design.Role!.Reference}' in '{Design.Role!.Column}'",
+            $"at least one value of '{Design.Set}' with one sample '{_groups.Index}' and one '{_groups.Reference}' in '{_groups.Column}'",
             "Check design.set and design.role.");
     }
 }
