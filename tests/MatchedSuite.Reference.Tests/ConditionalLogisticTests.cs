@@ -103,4 +103,40 @@ public class ConditionalLogisticTests
         Expected.Check(Math.Exp(fit.Estimate), "zero_cell", "matched_or", "or");
         Assert.Equal((Remarks.Separated, double.NegativeInfinity), (fit.Remarks, fit.Interval.Low));
     }
+
+    [Fact]
+    public void Profile_limits_and_the_likelihood_ratio_given_a_covariate_agree_with_enumeration_at_30_digits()
+    {
+        // mpmath 1.2.1: Newton on the likelihood with every subset listed, limits by root finding on the profile.
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        SetSample sets = ReferenceSets.Of("infert", "spontaneous", frame, "induced");
+        ConditionalLogisticFit fit = ConditionalLogistic.Fit(sets, TestOptions.Default, scratch);
+        Interval profile = ConditionalLogistic.ProfileInterval(sets, TestOptions.Default, scratch);
+        Assert.Equal(1.352770285, profile.Low, 5e-10);
+        Assert.Equal(2.747328718, profile.High, 5e-10);
+        Assert.Equal(-90.7177701233, fit.LogLikelihoodOfCovariates, 5e-11);
+        Assert.Equal(53.0310664, fit.LikelihoodRatio.Statistic, 5e-8);
+        Assert.Equal(3.283144453e-13, fit.LikelihoodRatio.P.Value, 5e-23);
+    }
+
+    [Fact]
+    public void Levels_and_trend_agree_with_enumeration_at_30_digits()
+    {
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        SetSample sets = ReferenceSets.Of("bdendo", "dur", frame);
+        double[] odds = new double[4], errors = new double[4];
+        ConditionalLogisticCategories.Fit(sets, [0, 1, 2, 3, 4], TestOptions.Default, scratch, odds, errors);
+        TestResult omnibus = ConditionalLogisticCategories.Run(sets, [0, 1, 2, 3, 4], TestOptions.Default, scratch);
+        TestResult trend = ConditionalLogistic.Run(sets, TestOptions.Default, scratch);
+        double[] expected = [2.66468639, 4.175853175, 8.134479282, 10.40943486];
+        for (int level = 0; level < 4; level++)
+            Assert.Equal(expected[level], Math.Exp(odds[level]), 5e-9);
+        Assert.Equal(34.55887075, omnibus.Statistic, 5e-9);
+        Assert.Equal(4, omnibus.DegreesOfFreedom);
+        Assert.Equal(5.722678441e-7, omnibus.P.Value, 5e-16);
+        Assert.Equal(0.5930071384, trend.Estimate, 5e-11);
+        Assert.Equal(1.086052258e-7, trend.P.Value, 5e-17);
+    }
 }

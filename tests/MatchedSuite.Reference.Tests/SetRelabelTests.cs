@@ -27,6 +27,21 @@ public class SetRelabelTests
         Assert.Equal(2 / all, two.SmallestPossibleP.Value);
     }
 
+    [Fact]
+    public void One_to_four_sets_give_the_counts_of_every_relabeling_in_base_R()
+    {
+        // Mack et al. (1976), months of oestrogen use by category, the first eight sets: all 5^8 sums by outer(), base R 4.2.2.
+        var scratch = new Scratch();
+        using Scratch.Frame frame = scratch.Open();
+        SetSample sets = ReferenceSets.FirstOf("bdendo", "dur", 8, frame);
+        TestResult greater = SetRelabel.Run(sets, new TestOptions { Sides = Sides.Greater }, scratch);
+        TestResult less = SetRelabel.Run(sets, new TestOptions { Sides = Sides.Less }, scratch);
+        Assert.Equal(14.25, greater.Statistic, 1e-12);
+        Assert.Equal(14.25 / 8, greater.Estimate, 1e-12);
+        Assert.Equal(910.0 / 390625, greater.P.Value, 1e-15);
+        Assert.Equal(390260.0 / 390625, less.P.Value, 1e-15);
+    }
+
     private static TestResult Run(string dataset, string index, string reference, Sides sides)
     {
         ReferenceTable table = Expected.Table(dataset);

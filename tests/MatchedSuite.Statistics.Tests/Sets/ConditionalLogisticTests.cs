@@ -120,26 +120,4 @@ public class ConditionalLogisticTests
                 Assert.Equal(3.841458820694124, fallen, 1e-8); // square of the normal quantile 1.959963984540054
             }
         });
-
-    [Fact]
-    public void Nothing_is_allocated_for_a_further_endpoint()
-    {
-        var random = new Random(3);
-        var sets = new DrawnSets(
-            [.. Enumerable.Range(0, 300).Select(_ => random.NextDouble())],
-            [.. Enumerable.Range(0, 76).Select(s => s * 4)],
-            [.. Enumerable.Range(0, 300).Select(i => i % 4 == 0 || (i > 150 && i % 4 == 1))],
-            []);
-        var scratch = new Scratch();
-        Once();
-        long before = GC.GetAllocatedBytesForCurrentThread();
-        Once();
-        Assert.Equal(before, GC.GetAllocatedBytesForCurrentThread());
-
-        void Once()
-        {
-            using Scratch.Frame frame = scratch.Open();
-            ConditionalLogistic.Run(sets.Take(frame), TestOptions.Default, scratch);
-        }
-    }
 }
