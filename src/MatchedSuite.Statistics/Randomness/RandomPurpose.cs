@@ -7,7 +7,7 @@ public enum RandomPurpose
     /// <summary>Sign flips of whole sets; index: the resample, counter: the set.</summary>
     SignFlips = 1,
 
-    /// <summary>Relabelings within sets; index: the resample, counter: the draw, one a member of the smaller role, set after set.</summary>
+    /// <summary>Relabelings within sets; index: the resample, counter: the word within it.</summary>
     Relabelings = 2,
 
     /// <summary>Simulated studies for planning; index: the study, counter: the number within it.</summary>

@@ -1,3 +1,4 @@
+using System.Runtime.InteropServices;
 using MatchedSuite.Statistics.Randomness;
 
 namespace MatchedSuite.Statistics.Sets;
@@ -10,8 +11,14 @@ namespace MatchedSuite.Statistics.Sets;
 /// </remarks>
 internal readonly ref struct Relabelings
 {
+    // A word is cut into numbers while so many combinations of them fit: none is favoured by more than 2^-32 of its share.
+    private const ulong MostCombinations = 1UL << 32;
+
     private readonly SetSample _sets;
     private readonly ReadOnlySpan<double> _centred;
+
+    // 1/k + 1/m of each set: with its mean taken off, mean index − mean reference is this times the sum over the index members.
+    private readonly ReadOnlySpan<double> _factors;
 
     /// <summary>Takes the sets and computes the observed statistic.</summary>
     /// <param name="sets">At least one set.</param>
@@ -22,9 +29,12 @@ internal readonly ref struct Relabelings
     {
         _sets = sets;
         Span<double> centred = frame.Doubles(sets.Members);
+        Span<double> factors = frame.Doubles(sets.Sets);
         for (int s = 0; s < sets.Sets; s++)
         {
             ReadOnlySpan<double> values = sets.Values[sets.Starts[s]..sets.Starts[s + 1]];
+            int index = sets.IndexCounts[s], reference = values.Length - index;
+            factors[s] = (1.0 / index) + (1.0 / reference);
             Span<double> own = centred[sets.Starts[s]..sets.Starts[s + 1]];
             double sum = 0, largest = 0, observed = 0;
             foreach (double value in values)
@@ -34,14 +44,15 @@ internal readonly ref struct Relabelings
             {
                 own[i] = values[i] - values[0] - mean;
                 largest = Math.Max(largest, Math.Abs(own[i]));
-                observed += i < sets.IndexCounts[s] ? own[i] : 0;
+                observed += i < index ? own[i] : 0;
             }
 
-            Statistic += observed * Factor(s);
-            Bound += largest * Factor(s) * Smaller(s);
+            Statistic += observed * factors[s];
+            Bound += largest * factors[s] * Math.Min(index, reference);
         }
 
         _centred = centred;
+        _factors = factors;
         Listed = CountUpTo(mostListed);
         int count = Listed > 0 ? Listed : resamples;
         Falls = frame.Doubles(count);
@@ -103,25 +114,31 @@ internal readonly ref struct Relabelings
     /// <param name="frame">Working memory.</param>
     public void Draw(long seed, in Scratch.Frame frame)
     {
-        int draws = 0, largest = 0;
+        int largest = 0;
         for (int s = 0; s < _sets.Sets; s++)
-        {
-            draws += Smaller(s);
             largest = Math.Max(largest, Smaller(s));
-        }
-
-        Span<long> words = frame.Longs(draws);
-        Span<ulong> bits = System.Runtime.InteropServices.MemoryMarshal.Cast<long, ulong>(words);
         Span<int> subset = frame.Integers(largest);
+        Span<ulong> words = MemoryMarshal.Cast<long, ulong>(frame.Longs(WordsNeeded()));
         for (int resample = 0; resample < Falls.Length; resample++)
         {
-            CounterRandom.Fill(seed, RandomPurpose.Relabelings, resample, bits);
+            CounterRandom.Fill(seed, RandomPurpose.Relabelings, resample, words);
             double falls = 0, steps = 0;
-            for (int s = 0, used = 0; s < _sets.Sets; s++)
+            ulong rest = words[0], combinations = 1;
+            for (int s = 0, used = 1; s < _sets.Sets; s++)
             {
+                int members = _sets.Starts[s + 1] - _sets.Starts[s];
                 Span<int> own = subset[..Smaller(s)];
-                DrawSubset(own, _sets.Starts[s + 1] - _sets.Starts[s], bits.Slice(used, own.Length));
-                used += own.Length;
+
+                // Floyd's sampling: each subset of this size is as likely as any other.
+                for (int i = 0; i < own.Length; i++)
+                {
+                    int last = members - own.Length + i;
+                    if (Exhausted(ref combinations, last + 1))
+                        rest = words[used++];
+                    int pick = (int)Math.BigMul(rest, (ulong)(last + 1), out rest);
+                    own[i] = own[..i].Contains(pick) ? last : pick;
+                }
+
                 var (fall, step) = Assign(s, own);
                 falls += fall;
                 steps += step;
@@ -132,15 +149,28 @@ internal readonly ref struct Relabelings
         }
     }
 
-    // Floyd's sampling: each subset of this size is as likely as any other.
-    private static void DrawSubset(Span<int> subset, int members, ReadOnlySpan<ulong> bits)
+    private int WordsNeeded()
     {
-        for (int i = 0; i < subset.Length; i++)
+        int words = 1;
+        ulong combinations = 1;
+        for (int s = 0; s < _sets.Sets; s++)
         {
-            int last = members - subset.Length + i;
-            int pick = (int)Math.BigMul(bits[i], (ulong)(last + 1), out _);
-            subset[i] = subset[..i].Contains(pick) ? last : pick;
+            int members = _sets.Starts[s + 1] - _sets.Starts[s];
+            for (int i = members - Smaller(s); i < members; i++)
+                words += Exhausted(ref combinations, i + 1) ? 1 : 0;
         }
+
+        return words;
+    }
+
+    // A product of a word with a bound has the number above the point and, below it, what is left of the word's randomness.
+    private static bool Exhausted(ref ulong combinations, int bound)
+    {
+        combinations *= (ulong)bound;
+        if (combinations <= MostCombinations)
+            return false;
+        combinations = (ulong)bound;
+        return true;
     }
 
     // The next subset in lexicographic order; false after the last.
@@ -163,6 +193,12 @@ internal readonly ref struct Relabelings
         int from = _sets.Starts[set], index = _sets.IndexCounts[set], members = _sets.Starts[set + 1] - from;
         bool indexIsSmaller = index <= members - index;
         int first = indexIsSmaller ? 0 : index;
+        if (subset.Length == 1)
+        {
+            double difference = _centred[from + first] - _centred[from + subset[0]];
+            return subset[0] == first ? (0, 0) : ((indexIsSmaller ? difference : -difference) * _factors[set], _factors[set]);
+        }
+
         double observed = 0, assigned = 0;
         int kept = 0;
         for (int i = 0; i < subset.Length; i++)
@@ -173,18 +209,11 @@ internal readonly ref struct Relabelings
         }
 
         double fall = indexIsSmaller ? observed - assigned : assigned - observed;
-        return kept == subset.Length ? (0, 0) : (fall * Factor(set), (subset.Length - kept) * Factor(set));
+        return kept == subset.Length ? (0, 0) : (fall * _factors[set], (subset.Length - kept) * _factors[set]);
     }
 
     private int Smaller(int set) =>
         Math.Min(_sets.IndexCounts[set], _sets.Starts[set + 1] - _sets.Starts[set] - _sets.IndexCounts[set]);
-
-    // 1/k + 1/m: with the set's mean taken off, mean index − mean reference is this times the sum over the index members.
-    private double Factor(int set)
-    {
-        int index = _sets.IndexCounts[set], reference = _sets.Starts[set + 1] - _sets.Starts[set] - index;
-        return (1.0 / index) + (1.0 / reference);
-    }
 
     private int CountUpTo(int most)
     {

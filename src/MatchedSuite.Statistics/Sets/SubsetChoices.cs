@@ -19,6 +19,9 @@ internal readonly ref struct SubsetChoices
     private const double CloseEnough = 0.5;
     private const double ProductBeforeLogging = 1e280;
 
+    // The chance of the wanted number is at least exp(−this) however the tilt is chosen: far from underflow.
+    private const double HarmlessTilt = 300;
+
     private readonly ReadOnlySpan<double> _differences;
     private readonly ReadOnlySpan<int> _starts;
     private readonly ReadOnlySpan<int> _chosen;
@@ -257,6 +260,8 @@ internal readonly ref struct SubsetChoices
 
         double ifAllEqual = NaturalLogarithm.Of((double)(along.Length - wanted) / wanted);
         double low = smallest + ifAllEqual, high = largest + ifAllEqual, tilt = (low + high) / 2;
+        if (along.Length * (((high - low) / 2) + Math.Abs(ifAllEqual) + 1) <= HarmlessTilt)
+            return tilt;
         for (int step = 0; step < MostTiltSteps; step++)
         {
             double expected = 0, slope = 0;
