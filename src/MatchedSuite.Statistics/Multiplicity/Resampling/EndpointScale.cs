@@ -10,17 +10,20 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// </remarks>
 internal readonly struct EndpointScale
 {
-    // Equal but for the rounding of their sums: such flips count as ties, as in the marginal test.
+    // Equal but for the rounding of their sums: such flips count as ties, as in the marginal test. The second term, in units of r,
+    // is what rounding can leave of a sum of zero.
     private const double TieTolerance = 1e-9;
+    private const double ZeroTolerance = 1e-12;
 
     private const int LargestExponent = 1023;
 
-    private EndpointScale(double power, double factor, double bend, double magnitude, double observed, int sets)
+    private EndpointScale(double power, double factor, double bend, in WholeNumbers whole, double observed, int sets)
     {
         Power = power;
         Factor = factor;
         Bend = bend;
-        Magnitude = magnitude;
+        Multiplier = whole.Multiplier;
+        Rounding = whole.Loss * factor;
         Observed = observed;
         Sets = sets;
     }
@@ -34,8 +37,11 @@ internal readonly struct EndpointScale
     /// <summary>k: how much missing sets bend r² into w.</summary>
     public double Bend { get; }
 
-    /// <summary>Σ|d|, the largest sum that any flip gives.</summary>
-    public double Magnitude { get; }
+    /// <summary>What the scaled differences are multiplied by before they are rounded to whole numbers.</summary>
+    public double Multiplier { get; }
+
+    /// <summary>How far r of any flip may be off by that rounding.</summary>
+    public double Rounding { get; }
 
     /// <summary>w of the data as they are.</summary>
     public double Observed { get; }
@@ -79,7 +85,8 @@ internal readonly struct EndpointScale
         double factor = 1 / Math.Sqrt(isT ? sets * squares : squares);
         double bend = isT ? (double)(differences.Length - sets) / (sets - 1) : 0;
         double directed = options.Sides == Sides.Less ? -sum : sum;
-        return new EndpointScale(power, factor, bend, magnitude, Comparable(directed, factor, bend, options.Sides), sets);
+        var whole = WholeNumbers.Of(differences, power, magnitude);
+        return new EndpointScale(power, factor, bend, whole, Comparable(directed, factor, bend, options.Sides), sets);
     }
 
     /// <summary>w of a signed sum.</summary>
@@ -88,10 +95,12 @@ internal readonly struct EndpointScale
     /// <summary>The smallest w that counts as having reached the observed one.</summary>
     public double Threshold()
     {
-        double r = Math.Sqrt(Math.Abs(Observed));
-        double tied = r * (1 - (Math.Sign(Observed) * TieTolerance));
-        return Math.Sign(Observed) * tied * tied;
+        double tied = Tied(Math.CopySign(Math.Sqrt(Math.Abs(Observed)), Observed), 1);
+        return tied * Math.Abs(tied);
     }
+
+    /// <summary>The smallest sum that counts as having reached <paramref name="sum"/>.</summary>
+    public double TiedSum(double sum) => Tied(sum, Factor);
 
     /// <summary>The t that w stands for where N sets are in play; scores are their own square root.</summary>
     public static double StatisticOf(double w, int sets, FlipStatistic statistic)
@@ -102,6 +111,8 @@ internal readonly struct EndpointScale
             : square < 1 ? Math.Sqrt((sets - 1) * square / (1 - square)) : double.PositiveInfinity;
         return Math.CopySign(size, w);
     }
+
+    private static double Tied(double value, double factor) => value - TieTolerance * Math.Abs(value) - ZeroTolerance / factor;
 
     private static double Comparable(double sum, double factor, double bend, Sides sides)
     {

@@ -3,10 +3,10 @@ using System.Runtime.Intrinsics;
 
 namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 
-/// <summary>Settles in double precision what single precision left open: the few flips that come too near to a threshold.</summary>
+/// <summary>Settles from the differences themselves what whole-number sums left open: the few flips that come too near to a threshold.</summary>
 /// <remarks>
 /// A flip is followed once more from the least significant endpoint on. Whole-number sums show which endpoints come near any
-/// of its open thresholds; only those are summed in double precision.
+/// of its open thresholds; only those are summed from their differences.
 /// </remarks>
 internal sealed class ExactFlips
 {
@@ -25,18 +25,13 @@ internal sealed class ExactFlips
     }
 
     /// <summary>Asks whether a flip's largest w up to a position reaches that position's threshold.</summary>
-    public void AskPosition(int flip, int position)
-    {
-        var open = Open(flip);
-        open.Positions.Add(position);
-        open.Floor = Math.Min(open.Floor, _thresholds.Possibly[position]);
-    }
+    public void AskPosition(int flip, int position) => Open(flip).Positions.Add(position);
 
-    /// <summary>Asks for a flip's largest w over all positions, which lies at or above <paramref name="floor"/> in single precision.</summary>
-    public void AskMaximum(int flip, float floor)
+    /// <summary>Asks for a flip's largest w over all positions, attained by an endpoint at or above <paramref name="floor"/> by its whole-number sums.</summary>
+    public void AskMaximum(int flip, double floor)
     {
         var open = Open(flip);
-        open.Floor = Math.Min(open.Floor, floor);
+        open.MaximumFloor = Math.Min(open.MaximumFloor, floor);
     }
 
     /// <summary>Answers what was asked: raises the counts of the positions that are reached and returns the largest w by flip.</summary>
@@ -74,22 +69,20 @@ internal sealed class ExactFlips
         _flips.Fill(flip, words);
         if (_endpoints.Sets % 64 != 0)
             words[^1] &= (1UL << _endpoints.Sets) - 1;
-        Span<float> lanes = stackalloc float[Row];
-        for (int tile = 0; tile < panel.Tiles; tile++)
+        Span<double> lanes = stackalloc double[Row];
+        for (int tile = 0; tile < panel.Tiles && !open.IsAnswered; tile++)
         {
-            panel.Scale(tile).Comparable(SumOf(panel.Values(tile), words)).CopyTo(lanes);
+            var sums = SumOf(panel.Values(tile), words);
+            panel.Scale(tile).Lower(sums).CopyTo(lanes);
+            panel.Scale(tile).Upper(sums).CopyTo(lanes[(Row / 2)..]);
             int position = (panel.FirstTile + tile) * Row;
             for (int lane = 0; lane < Row; lane++)
             {
                 int place = position + lane - _thresholds.Padding;
-                if (place >= 0 && lanes[lane] >= open.Floor)
+                if (place >= 0 && lanes[lane] >= open.Floor(_thresholds))
                     open.Largest = Math.Max(open.Largest, _endpoints.Comparable(place, words, differences));
-                if (open.Answered < open.Positions.Count && open.Positions[open.Answered] == position + lane)
-                {
-                    if (open.Largest >= _thresholds.Exact[position + lane])
-                        Interlocked.Increment(ref counts[position + lane]);
-                    open.Answered++;
-                }
+                if (open.NextPosition == position + lane && open.Answer(_thresholds))
+                    Interlocked.Increment(ref counts[position + lane]);
             }
         }
     }
@@ -113,12 +106,22 @@ internal sealed class ExactFlips
 
     private sealed class OpenFlip
     {
+        private int _answered;
+
         public List<int> Positions { get; } = [];
 
-        public float Floor { get; set; } = float.PositiveInfinity;
+        public double MaximumFloor { get; set; } = double.PositiveInfinity;
 
         public double Largest { get; set; } = double.NegativeInfinity;
 
-        public int Answered { get; set; }
+        public int NextPosition => _answered < Positions.Count ? Positions[_answered] : int.MaxValue;
+
+        public bool IsAnswered => _answered == Positions.Count && double.IsPositiveInfinity(MaximumFloor);
+
+        // Thresholds ascend, so the next open position has the lowest of those that remain.
+        public double Floor(Thresholds thresholds) =>
+            _answered < Positions.Count ? Math.Min(MaximumFloor, thresholds.Possibly[Positions[_answered]]) : MaximumFloor;
+
+        public bool Answer(Thresholds thresholds) => Largest >= thresholds.Exact[Positions[_answered++]];
     }
 }

@@ -1,6 +1,5 @@
 using System.Numerics;
 using System.Runtime.CompilerServices;
-using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
 namespace MatchedSuite.Statistics.Multiplicity.Resampling;
@@ -13,28 +12,34 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// </remarks>
 internal sealed class FlipTables
 {
-    // Tables that a pass reads together; with 4 KiB each they stay in the first-level cache while the flips stream past.
-    private const int Pass = 8;
+    // Sets whose signed sums are tabulated together. A table of 4 KiB costs little to build beside some thousand lookups, and the
+    // tables of two hundred sets stay in a second-level cache beside the flips.
+    private const int GroupSets = 6;
+    private const int Patterns = 1 << GroupSets;
     private const int Row = Lanes.Endpoints;
-    private const int Table = Lanes.Patterns * Row;
+    private const int Table = Patterns * Row;
+
+    // Lookups written out one after the other, and tables that one pass over the flips reads: a quarter of a megabyte.
+    private const int Unrolled = 8;
+    private const int Pass = 64;
 
     private readonly int _groups;
-    private readonly int[] _tables;
+    private readonly CacheAligned<int> _tables;
+    private readonly CacheAligned<int> _sums;
     private readonly ushort[] _offsets;
     private readonly ulong[] _flip;
-    private readonly int[] _sums;
 
     /// <summary>Room for a block of flips.</summary>
     /// <param name="sets">Number of sets.</param>
-    /// <param name="capacity">Most flips in a block.</param>
-    /// <param name="flips">The flips.</param>
-    public FlipTables(int sets, int capacity, SignFlips flips)
+    /// <param name="capacity">Most flips in the block.</param>
+    /// <param name="strip">Most flips that are summed at once.</param>
+    public FlipTables(int sets, int capacity, int strip)
     {
-        _groups = Lanes.Groups(sets);
-        _tables = new int[_groups * Table];
+        _groups = (sets + GroupSets - 1) / GroupSets;
+        _tables = new CacheAligned<int>(_groups * Table);
+        _sums = new CacheAligned<int>(strip * Row);
         _offsets = new ushort[_groups * capacity];
-        _sums = new int[capacity * Row];
-        _flip = new ulong[flips.Words + 1];
+        _flip = new ulong[(sets + 63) / 64 + 1];
     }
 
     /// <summary>Takes the sign patterns of a block of flips.</summary>
@@ -45,28 +50,29 @@ internal sealed class FlipTables
             flips.Fill(first + flip, _flip);
             var offsets = _offsets.AsSpan(flip * _groups, _groups);
             for (int group = 0; group < offsets.Length; group++)
-                offsets[group] = (ushort)(Pattern(group * Lanes.GroupSets) * Row);
+                offsets[group] = (ushort)(Pattern(group * GroupSets) * Row);
         }
     }
 
-    /// <summary>Sums of one tile under each flip of the block: sixteen lanes a flip.</summary>
-    /// <param name="values">Whole-number differences of the tile, sixteen lanes a set.</param>
-    /// <param name="count">Flips of the block.</param>
-    public ReadOnlySpan<int> Sums(ReadOnlySpan<int> values, int count)
+    /// <summary>Takes the whole-number differences of one tile, sixteen lanes a set.</summary>
+    public void TakeTile(ReadOnlySpan<int> values)
     {
         for (int group = 0; group < _groups; group++)
         {
-            int first = group * Lanes.GroupSets * Row;
-            Tabulate(values.Slice(first, Math.Min(Lanes.GroupSets * Row, values.Length - first)), _tables.AsSpan(group * Table, Table));
+            int first = group * GroupSets * Row;
+            Tabulate(values.Slice(first, Math.Min(GroupSets * Row, values.Length - first)), _tables.Span.Slice(group * Table, Table));
         }
+    }
 
-        var sums = _sums.AsSpan(0, count * Row);
+    /// <summary>Sums of the tile under consecutive flips of the block: sixteen lanes a flip.</summary>
+    /// <param name="first">The first flip, counted from the block's.</param>
+    /// <param name="count">How many, at most a strip.</param>
+    public ReadOnlySpan<int> Sums(int first, int count)
+    {
+        var sums = _sums.Span[..(count * Row)];
         sums.Clear();
-        int done = 0;
-        for (; done + Pass <= _groups; done += Pass)
-            AddEight(done, sums);
-        for (; done < _groups; done++)
-            AddOne(done, sums);
+        for (int group = 0; group < _groups; group += Pass)
+            AddLookups(group, Math.Min(Pass, _groups - group), first, count);
         return sums;
     }
 
@@ -76,9 +82,9 @@ internal sealed class FlipTables
         int word = firstSet >> 6;
         int shift = firstSet & 63;
         ulong bits = _flip[word] >> shift;
-        if (shift > 64 - Lanes.GroupSets)
+        if (shift > 64 - GroupSets)
             bits |= _flip[word + 1] << (64 - shift);
-        return bits & (Lanes.Patterns - 1);
+        return bits & (Patterns - 1);
     }
 
     // A pattern with one more sign changed loses that difference twice; wrapping does no harm, the total is in range.
@@ -88,44 +94,53 @@ internal sealed class FlipTables
         for (int at = 0; at < values.Length; at += Row)
             all += Vector512.Create(values.Slice(at, Row));
         all.CopyTo(table);
-        for (int pattern = 1; pattern < Lanes.Patterns; pattern++)
+        for (int set = 0; set < GroupSets; set++)
         {
-            int changed = BitOperations.TrailingZeroCount(pattern) * Row;
-            var before = Vector512.Create(table.Slice((pattern & (pattern - 1)) * Row, Row));
-            var value = changed < values.Length ? Vector512.Create(values.Slice(changed, Row)) : Vector512<int>.Zero;
-            (before - value - value).CopyTo(table.Slice(pattern * Row, Row));
+            int half = Row << set;
+            var value = set * Row < values.Length ? Vector512.Create(values.Slice(set * Row, Row)) : Vector512<int>.Zero;
+            for (int at = 0; at < half; at += Row)
+                (Vector512.Create(table.Slice(at, Row)) - value - value).CopyTo(table.Slice(half + at, Row));
         }
     }
 
-    // References instead of spans: eight lookups a flip leave no room for bounds checks. Offsets are below the table length by
-    // construction, and there is one for every group of every flip.
+    // References instead of spans: a lookup is two instructions, and a bounds check would double it. Every offset is a row of
+    // its table by construction, and there is one for each group of each flip.
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    private void AddEight(int group, Span<int> sums)
+    private void AddLookups(int group, int groups, int first, int count)
     {
-        ref int table = ref _tables[group * Table];
-        ref ushort offsets = ref _offsets[group];
-        ref int sum = ref MemoryMarshal.GetReference(sums);
-        for (int at = 0; at < sums.Length; at += Row)
+        ref int sum = ref _sums[0];
+        ref ushort offsets = ref _offsets[first * _groups + group];
+        for (int flip = 0; flip < count; flip++)
         {
-            var total = Vector512.LoadUnsafe(ref sum)
-                + Vector512.LoadUnsafe(ref table, offsets)
-                + Vector512.LoadUnsafe(ref table, (nuint)Table + Unsafe.Add(ref offsets, 1))
-                + Vector512.LoadUnsafe(ref table, (nuint)(2 * Table) + Unsafe.Add(ref offsets, 2))
-                + Vector512.LoadUnsafe(ref table, (nuint)(3 * Table) + Unsafe.Add(ref offsets, 3))
-                + Vector512.LoadUnsafe(ref table, (nuint)(4 * Table) + Unsafe.Add(ref offsets, 4))
-                + Vector512.LoadUnsafe(ref table, (nuint)(5 * Table) + Unsafe.Add(ref offsets, 5))
-                + Vector512.LoadUnsafe(ref table, (nuint)(6 * Table) + Unsafe.Add(ref offsets, 6))
-                + Vector512.LoadUnsafe(ref table, (nuint)(7 * Table) + Unsafe.Add(ref offsets, 7));
+            ref int table = ref _tables[group * Table];
+            ref ushort offset = ref offsets;
+            var total = Vector512.LoadUnsafe(ref sum);
+            int left = groups;
+            for (; left >= Unrolled; left -= Unrolled)
+            {
+                total = total
+                    + Vector512.LoadUnsafe(ref table, offset)
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, Table), Unsafe.Add(ref offset, 1))
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, 2 * Table), Unsafe.Add(ref offset, 2))
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, 3 * Table), Unsafe.Add(ref offset, 3))
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, 4 * Table), Unsafe.Add(ref offset, 4))
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, 5 * Table), Unsafe.Add(ref offset, 5))
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, 6 * Table), Unsafe.Add(ref offset, 6))
+                    + Vector512.LoadUnsafe(ref Unsafe.Add(ref table, 7 * Table), Unsafe.Add(ref offset, 7));
+                table = ref Unsafe.Add(ref table, Unrolled * Table);
+                offset = ref Unsafe.Add(ref offset, Unrolled);
+            }
+
+            for (; left > 0; left--)
+            {
+                total += Vector512.LoadUnsafe(ref table, offset);
+                table = ref Unsafe.Add(ref table, Table);
+                offset = ref Unsafe.Add(ref offset, 1);
+            }
+
             total.StoreUnsafe(ref sum);
             sum = ref Unsafe.Add(ref sum, Row);
             offsets = ref Unsafe.Add(ref offsets, _groups);
         }
-    }
-
-    private void AddOne(int group, Span<int> sums)
-    {
-        var table = _tables.AsSpan(group * Table, Table);
-        for (int at = 0, flip = group; at < sums.Length; at += Row, flip += _groups)
-            (Vector512.Create(sums.Slice(at, Row)) + Vector512.Create(table.Slice(_offsets[flip], Row))).CopyTo(sums[at..]);
     }
 }

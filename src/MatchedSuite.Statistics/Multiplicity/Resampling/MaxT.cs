@@ -14,7 +14,8 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// </remarks>
 public static class MaxT
 {
-    private const int LargestBlock = 1024;
+    // Flips that one thread takes through the endpoints: for two hundred sets their patterns and maxima fill half a megabyte.
+    private const int LargestBlock = 2560;
 
     /// <summary>Adjusts all endpoints of a store.</summary>
     /// <param name="store">The differences.</param>
@@ -29,8 +30,8 @@ public static class MaxT
         var endpoints = new ScaledEndpoints(store, options, cancellation);
         var flips = new SignFlips(store.Sets, options.Seed, options.Resamples);
         var thresholds = new Thresholds(endpoints);
-        var maxima = new float[flips.Count];
-        Array.Fill(maxima, float.NegativeInfinity);
+        var maxima = new double[flips.Count];
+        Array.Fill(maxima, double.NegativeInfinity);
         var stepDown = new int[thresholds.Exact.Length];
         if (endpoints.Count == 0)
             return Result(endpoints, flips, thresholds, stepDown, [], double.PositiveInfinity);
@@ -47,7 +48,7 @@ public static class MaxT
     }
 
     private static List<(int Flip, int Position)> FollowAll(QuantizedPanel panel, ScaledEndpoints endpoints, Thresholds thresholds,
-        SignFlips flips, float[] maxima, int[] counts, CancellationToken cancellation)
+        SignFlips flips, double[] maxima, int[] counts, CancellationToken cancellation)
     {
         var undecided = new List<(int, int)>();
         int threads = endpoints.Options.Threads;

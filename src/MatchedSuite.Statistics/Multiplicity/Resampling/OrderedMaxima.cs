@@ -3,17 +3,17 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// <summary>The largest w of each flip over all endpoints: how many reach each threshold, and the critical value.</summary>
 internal sealed class OrderedMaxima
 {
-    private readonly float[] _maxima;
+    private readonly double[] _maxima;
     private readonly Thresholds _thresholds;
     private readonly Dictionary<int, double> _exact = [];
     private readonly int _criticalRank;
-    private readonly (float Low, float High) _criticalBand;
+    private readonly (double Low, double High) _criticalBand;
 
-    /// <summary>Takes the single-precision maxima.</summary>
+    /// <summary>Takes the maxima from whole-number sums.</summary>
     /// <param name="maxima">One for each flip.</param>
     /// <param name="thresholds">The thresholds.</param>
     /// <param name="level">Familywise level of the critical value.</param>
-    public OrderedMaxima(float[] maxima, Thresholds thresholds, double level)
+    public OrderedMaxima(double[] maxima, Thresholds thresholds, double level)
     {
         _maxima = maxima;
         _thresholds = thresholds;
@@ -22,9 +22,9 @@ internal sealed class OrderedMaxima
         _criticalRank = (int)Math.Floor(level * (1.0 + maxima.Length) * (1 + 1e-12)) - 1;
         if (_criticalRank < 0 || _criticalRank >= maxima.Length)
             return;
-        float[] ascending = [.. maxima];
+        double[] ascending = [.. maxima];
         Array.Sort(ascending);
-        float critical = ascending[^(_criticalRank + 1)];
+        double critical = ascending[^(_criticalRank + 1)];
         var (possibly, surely) = thresholds.Around(critical);
         _criticalBand = (thresholds.Around(possibly).Possibly, thresholds.Around(surely).Surely);
     }
@@ -32,7 +32,7 @@ internal sealed class OrderedMaxima
     /// <summary>w that must be exceeded for a single-step p-value at or below the level.</summary>
     public double Critical { get; private set; } = double.PositiveInfinity;
 
-    /// <summary>Asks for the exact maxima that single precision cannot place.</summary>
+    /// <summary>Asks for the exact maxima that whole-number sums cannot place.</summary>
     public void AskOpenOnes(ExactFlips exact)
     {
         for (int flip = 0; flip < _maxima.Length; flip++)
@@ -77,11 +77,11 @@ internal sealed class OrderedMaxima
 
     private bool IsNearCritical(int flip) => _maxima[flip] >= _criticalBand.Low && _maxima[flip] <= _criticalBand.High && _criticalRank >= 0;
 
-    // The exact maximum may lie a margin lower, and the endpoint that attains it a margin lower still in single precision.
-    private float LowestOfTheLargest(float maximum) => _thresholds.Around(_thresholds.Around(maximum).Possibly).Possibly;
+    // The exact maximum may lie a margin lower, and the endpoint that attains it a margin lower still by its whole-number sums.
+    private double LowestOfTheLargest(double maximum) => _thresholds.Around(_thresholds.Around(maximum).Possibly).Possibly;
 
     // Number of ascending thresholds that are at most w.
-    private static int CountAtMost(float[] ascending, float w)
+    private static int CountAtMost(double[] ascending, double w)
     {
         int low = 0;
         int high = ascending.Length;

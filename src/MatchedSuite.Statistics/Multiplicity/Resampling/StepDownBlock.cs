@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
 namespace MatchedSuite.Statistics.Multiplicity.Resampling;
@@ -9,23 +11,27 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// </remarks>
 internal sealed class StepDownBlock
 {
+    // Flips that are summed and then followed while their sums are still in the first-level cache.
+    private const int Strip = 256;
     private const int Row = Lanes.Endpoints;
+    private const int Half = Row / 2;
 
     private readonly Thresholds _thresholds;
     private readonly SignFlips _flips;
     private readonly FlipTables _tables;
-    private readonly float[] _largest;
+    private readonly CacheAligned<double> _largest;
     private readonly int[] _laneCounts = new int[Row];
 
+    /// <summary>Room for a block of at most <paramref name="capacity"/> flips.</summary>
     public StepDownBlock(int sets, int capacity, SignFlips flips, Thresholds thresholds)
     {
         _thresholds = thresholds;
         _flips = flips;
-        _tables = new FlipTables(sets, capacity, flips);
-        _largest = new float[capacity * Row];
+        _tables = new FlipTables(sets, capacity, Math.Min(Strip, capacity));
+        _largest = new CacheAligned<double>(capacity * Row);
     }
 
-    /// <summary>Pairs of a flip and a position that single precision could not decide.</summary>
+    /// <summary>Pairs of a flip and a position that whole-number sums could not decide.</summary>
     public List<(int Flip, int Position)> Undecided { get; } = [];
 
     /// <summary>Takes the flips <paramref name="first"/>… through all tiles of a panel.</summary>
@@ -33,49 +39,65 @@ internal sealed class StepDownBlock
     /// <param name="first">First flip of the block.</param>
     /// <param name="maxima">Largest w of each flip of the block before the panel and, on return, after it.</param>
     /// <param name="counts">One count a position, raised by the flips that surely reach its threshold; shared between blocks.</param>
-    public void Run(QuantizedPanel panel, int first, Span<float> maxima, int[] counts)
+    public void Run(QuantizedPanel panel, int first, Span<double> maxima, int[] counts)
     {
+        var largest = _largest.Span;
         _tables.TakeFlips(_flips, first, maxima.Length);
         for (int flip = 0; flip < maxima.Length; flip++)
-            Vector512.Create(maxima[flip]).CopyTo(_largest.AsSpan(flip * Row));
+            largest.Slice(flip * Row, Row).Fill(maxima[flip]);
         for (int tile = 0; tile < panel.Tiles; tile++)
         {
-            var sums = _tables.Sums(panel.Values(tile), maxima.Length);
             int position = (panel.FirstTile + tile) * Row;
-            int everywhere = Follow(sums, panel.Scale(tile), position, first);
+            int everywhere = 0;
+            Array.Clear(_laneCounts);
+            _tables.TakeTile(panel.Values(tile));
+            for (int strip = 0; strip < maxima.Length; strip += Strip)
+            {
+                var sums = _tables.Sums(strip, Math.Min(Strip, maxima.Length - strip));
+                everywhere += Follow(sums, panel.Scale(tile), largest.Slice(strip * Row, sums.Length), position, first + strip);
+            }
+
             for (int lane = 0; lane < Row; lane++)
                 Interlocked.Add(ref counts[position + lane], everywhere + _laneCounts[lane]);
         }
 
         for (int flip = 0; flip < maxima.Length; flip++)
-            maxima[flip] = LargestLane(Vector512.Create(_largest.AsSpan(flip * Row, Row)));
+            maxima[flip] = LargestOf(largest.Slice(flip * Row, Row));
     }
 
-    private int Follow(ReadOnlySpan<int> sums, TileScale scale, int position, int firstFlip)
+    // Returns how many flips reach every threshold of the tile; those that reach some are counted lane by lane.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private int Follow(ReadOnlySpan<int> sums, in TileScale tileScale, Span<double> largest, int position, int firstFlip)
     {
-        Array.Clear(_laneCounts);
+        var scale = tileScale;
         var all = Vector512.Create(_thresholds.Surely[position + Row - 1]);
         var any = Vector512.Create(_thresholds.Possibly[position]);
+        ref int sum = ref MemoryMarshal.GetReference(sums);
+        ref double kept = ref MemoryMarshal.GetReference(largest);
         int everywhere = 0;
-        for (int at = 0; at < sums.Length; at += Row)
+        for (nuint at = 0; at < (nuint)sums.Length; at += Row)
         {
-            var before = Vector512.Create(_largest.AsSpan(at, Row));
-            var own = scale.Comparable(Vector512.Create(sums.Slice(at, Row)));
-            var after = Vector512.Max(before, own);
-            after.CopyTo(_largest.AsSpan(at, Row));
-            if (Vector512.GreaterThanOrEqualAny(before, all))
+            var own = Vector512.LoadUnsafe(ref sum, at);
+            var lowerBefore = Vector512.LoadUnsafe(ref kept, at);
+            var upperBefore = Vector512.LoadUnsafe(ref kept, at + Half);
+            var lower = Vector512.MaxNative(lowerBefore, scale.Lower(own));
+            var upper = Vector512.MaxNative(upperBefore, scale.Upper(own));
+            lower.StoreUnsafe(ref kept, at);
+            upper.StoreUnsafe(ref kept, at + Half);
+            if (Vector512.GreaterThanOrEqualAny(Vector512.MaxNative(lowerBefore, upperBefore), all))
                 everywhere++;
-            else if (Vector512.GreaterThanOrEqualAny(after, any))
-                FollowLanes(LargestLane(before), own, position, firstFlip + at / Row);
+            else if (Vector512.GreaterThanOrEqualAny(Vector512.MaxNative(lower, upper), any))
+                FollowLanes(LargestLane(Vector512.MaxNative(lowerBefore, upperBefore)), own, tileScale, position, firstFlip + (int)at / Row);
         }
 
         return everywhere;
     }
 
-    private void FollowLanes(float largest, Vector512<float> own, int position, int flip)
+    private void FollowLanes(double largest, Vector512<int> sums, in TileScale scale, int position, int flip)
     {
-        Span<float> lanes = stackalloc float[Row];
-        own.CopyTo(lanes);
+        Span<double> lanes = stackalloc double[Row];
+        scale.Lower(sums).CopyTo(lanes);
+        scale.Upper(sums).CopyTo(lanes[Half..]);
         for (int lane = 0; lane < Row; lane++)
         {
             largest = Math.Max(largest, lanes[lane]);
@@ -86,10 +108,12 @@ internal sealed class StepDownBlock
         }
     }
 
-    private static float LargestLane(Vector512<float> lanes)
+    private static double LargestOf(ReadOnlySpan<double> lanes) =>
+        LargestLane(Vector512.MaxNative(Vector512.Create(lanes[..Half]), Vector512.Create(lanes[Half..])));
+
+    private static double LargestLane(Vector512<double> lanes)
     {
-        var eight = Vector256.Max(lanes.GetLower(), lanes.GetUpper());
-        var four = Vector128.Max(eight.GetLower(), eight.GetUpper());
+        var four = Vector256.MaxNative(lanes.GetLower(), lanes.GetUpper());
         return Math.Max(Math.Max(four[0], four[1]), Math.Max(four[2], four[3]));
     }
 }

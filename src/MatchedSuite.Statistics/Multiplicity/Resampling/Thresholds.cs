@@ -1,15 +1,18 @@
 namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 
-/// <summary>What each endpoint's observed statistic asks of a flip, and how near a single-precision w must be before it decides nothing.</summary>
+/// <summary>What each endpoint's observed statistic asks of a flip, and how near a w from whole-number sums must be before it decides nothing.</summary>
 /// <remarks>
-/// <para>Positions run over whole tiles, least significant first, padding included. A single-precision w at or above Surely means
-/// that the exact one is at or above Exact; below Possibly means that it is below; between them the exact one has to be asked.</para>
-/// <para>Error bound: r is off by at most δ from rounding to whole numbers, and by a few units of 2^-24 of itself; squaring doubles
-/// both, and bending multiplies a relative error by 1 + k·w at most. 2^-19 covers a dozen roundings and their products with room.</para>
+/// <para>Positions run over whole tiles, least significant first, padding included. A w from whole-number sums at or above Surely
+/// means that the one from the differences themselves is at or above Exact; below Possibly means that it is below; between them it
+/// has to be asked.</para>
+/// <para>Error bound: r is off by at most δ from rounding to whole numbers, and by a few units of 2^-53 of itself; squaring doubles
+/// both, and bending multiplies a relative error by 1 + k·w at most. 2^-45 covers the roundings and their products with room. Where
+/// the differences are multiples of a step δ is next to nothing, and the band is narrower than the tolerance for ties: their many
+/// ties are decided at once.</para>
 /// </remarks>
 internal sealed class Thresholds
 {
-    private const double RelativeRounding = 1.0 / (1 << 19);
+    private const double RelativeRounding = 1.0 / (1L << 45);
 
     // The bend is taken as straight over the width of the margin, which holds within this factor up to this relative width.
     private const double Curvature = 1.25;
@@ -21,13 +24,16 @@ internal sealed class Thresholds
     /// <summary>Sets the thresholds of every tested endpoint.</summary>
     public Thresholds(ScaledEndpoints endpoints)
     {
-        _rounding = QuantizedPanel.LargestRounding(endpoints);
         for (int place = 0; place < endpoints.Count; place++)
+        {
+            _rounding = Math.Max(_rounding, endpoints.ScaleAt(place).Rounding);
             _bend = Math.Max(_bend, endpoints.ScaleAt(place).Bend);
+        }
+
         Padding = QuantizedPanel.PaddingOf(endpoints);
         Exact = new double[Padding + endpoints.Count];
-        Surely = new float[Exact.Length];
-        Possibly = new float[Exact.Length];
+        Surely = new double[Exact.Length];
+        Possibly = new double[Exact.Length];
         for (int position = 0; position < Exact.Length; position++)
         {
             Exact[position] = endpoints.ScaleAt(Math.Max(0, position - Padding)).Threshold();
@@ -47,19 +53,19 @@ internal sealed class Thresholds
     /// <summary>The w that counts as having reached the observed one, ascending.</summary>
     public double[] Exact { get; }
 
-    /// <summary>From here on a single-precision w has reached it, ascending.</summary>
-    public float[] Surely { get; }
+    /// <summary>From here on a w from whole-number sums has reached it, ascending.</summary>
+    public double[] Surely { get; }
 
-    /// <summary>Below this a single-precision w has not reached it, ascending.</summary>
-    public float[] Possibly { get; }
+    /// <summary>Below this a w from whole-number sums has not reached it, ascending.</summary>
+    public double[] Possibly { get; }
 
-    /// <summary>The single-precision values between which an exact w may lie on either side of <paramref name="w"/>.</summary>
-    public (float Possibly, float Surely) Around(double w)
+    /// <summary>The values from whole-number sums between which an exact w may lie on either side of <paramref name="w"/>.</summary>
+    public (double Possibly, double Surely) Around(double w)
     {
         double size = Math.Abs(w);
         double absolute = 2 * _rounding * Math.Sqrt(size) + _rounding * _rounding + RelativeRounding * size;
         double margin = Curvature * (1 + _bend * size) * absolute;
         bool isStraight = (1 + _bend * size) * absolute <= LargestRelativeWidth * size || _bend == 0;
-        return (MathF.BitDecrement((float)(w - margin)), isStraight ? MathF.BitIncrement((float)(w + margin)) : float.PositiveInfinity);
+        return (Math.BitDecrement(w - margin), isStraight ? Math.BitIncrement(w + margin) : double.PositiveInfinity);
     }
 }

@@ -7,6 +7,9 @@ internal static class PlainMaxT
 {
     private const double TieTolerance = 1e-9;
 
+    // What rounding can leave of a sum of zero, in units of t.
+    private const double ZeroTolerance = 1e-11;
+
     public static (int[] StepDown, int[] SingleStep, double Critical) Counts(double[] differences, int sets, ResamplingOptions options)
     {
         int endpoints = differences.Length / sets;
@@ -75,5 +78,5 @@ internal static class PlainMaxT
     }
 
     private static bool Reaches(double statistic, double observed) =>
-        statistic >= observed - TieTolerance * Math.Abs(observed) || statistic.Equals(observed);
+        statistic >= observed - TieTolerance * Math.Abs(observed) - ZeroTolerance || statistic.Equals(observed);
 }
