@@ -1,3 +1,5 @@
+using MatchedSuite.Statistics.Distributions;
+
 namespace MatchedSuite.Statistics.Multiplicity;
 
 /// <summary>Šidák's adjustment: familywise error rate, independent or positively orthant dependent p-values, in one step.</summary>
@@ -29,24 +31,6 @@ public static class Sidak
         var bound = p.Times(trials);
         return p.Value * trials < 1e-18
             ? bound
-            : Probability.Min(bound, Probability.Of(-ExponentialMinusOne(trials * LogarithmOfOnePlus(-p.Value))));
-    }
-
-    // ln(1 + x) for -1 < x <= 0. The rounding of 1 + x is divided out again (Kahan), so small x keep all their digits.
-    private static double LogarithmOfOnePlus(double x)
-    {
-        double sum = 1 + x;
-        double kept = sum - 1;
-        return kept == 0 ? x : Math.Log(sum) * (x / kept);
-    }
-
-    // exp(x) - 1 for x <= 0, by the same device.
-    private static double ExponentialMinusOne(double x)
-    {
-        double power = Math.Exp(x);
-        double less = power - 1;
-        if (less == 0)
-            return x;
-        return power < 0.25 ? less : less * (x / Math.Log(power));
+            : Probability.Min(bound, Probability.Of(-LogOnePlus.Inverse(trials * LogOnePlus.Of(-p.Value))));
     }
 }

@@ -7,7 +7,7 @@ public enum FlipStatistic
     T,
 
     /// <summary>
-    /// The signed sum over its standard deviation under the flips, Σd/√Σd². With signed ranks as differences it is the signed-rank
+    /// The signed sum over its standard deviation under the flips, Σd/√Σd². With <see cref="Pairs.SignedRankScores"/> as differences it is the signed-rank
     /// test (Wilcoxon: zeros are given rank 0 and drop out; Pratt: their ranks are left out of the others' sum).
     /// </summary>
     Score,

@@ -28,7 +28,7 @@ public static class MaxT
         ArgumentNullException.ThrowIfNull(options);
         options.Validate();
         var endpoints = new ScaledEndpoints(store, options, cancellation);
-        var flips = new SignFlips(store.Sets, options.Seed, options.Resamples);
+        var flips = new CommonFlips(store.Sets, options.Seed, options.Resamples);
         var thresholds = new Thresholds(endpoints);
         var maxima = new double[flips.Count];
         Array.Fill(maxima, double.NegativeInfinity);
@@ -48,7 +48,7 @@ public static class MaxT
     }
 
     private static List<(int Flip, int Position)> FollowAll(QuantizedPanel panel, ScaledEndpoints endpoints, Thresholds thresholds,
-        SignFlips flips, double[] maxima, int[] counts, CancellationToken cancellation)
+        CommonFlips flips, double[] maxima, int[] counts, CancellationToken cancellation)
     {
         var undecided = new List<(int, int)>();
         int threads = endpoints.Options.Threads;
@@ -75,7 +75,7 @@ public static class MaxT
         return undecided;
     }
 
-    private static ResamplingResult Result(ScaledEndpoints endpoints, SignFlips flips, Thresholds thresholds,
+    private static ResamplingResult Result(ScaledEndpoints endpoints, CommonFlips flips, Thresholds thresholds,
         int[] stepDown, int[] singleStep, double critical)
     {
         var result = new AdjustedCounts(endpoints.All, flips.Count);

@@ -27,7 +27,7 @@ public static class MinP
         ArgumentNullException.ThrowIfNull(options);
         options.Validate();
         var endpoints = new ScaledEndpoints(store, options, cancellation);
-        var flips = new SignFlips(store.Sets, options.Seed, options.Resamples);
+        var flips = new CommonFlips(store.Sets, options.Seed, options.Resamples);
         byte[] patterns = FlipCounts.PatternsOf(flips, store.Sets);
         var parallel = new ParallelOptions { MaxDegreeOfParallelism = options.Threads, CancellationToken = cancellation };
         var observed = new int[endpoints.Count];

@@ -30,7 +30,7 @@ public class MinPTests
     private static (int[] StepDown, int[] SingleStep) Definition(double[] differences, int sets, ResamplingOptions options)
     {
         int endpoints = differences.Length / sets;
-        var flips = new SignFlips(sets, options.Seed, options.Resamples);
+        var flips = new CommonFlips(sets, options.Seed, options.Resamples);
         var sums = new double[endpoints][];
         var magnitudes = new double[endpoints];
         for (int j = 0; j < endpoints; j++)
@@ -55,7 +55,7 @@ public class MinPTests
     }
 
     // The last sum is that of the data as they are.
-    private static (double[] Sums, double Magnitude) Sums(ReadOnlySpan<double> differences, SignFlips flips, Sides sides)
+    private static (double[] Sums, double Magnitude) Sums(ReadOnlySpan<double> differences, CommonFlips flips, Sides sides)
     {
         var sums = new double[flips.Count + 1];
         var flip = new ulong[flips.Words];

@@ -13,7 +13,7 @@ internal static class PlainMaxT
     public static (int[] StepDown, int[] SingleStep, double Critical) Counts(double[] differences, int sets, ResamplingOptions options)
     {
         int endpoints = differences.Length / sets;
-        var flips = new SignFlips(sets, options.Seed, options.Resamples);
+        var flips = new CommonFlips(sets, options.Seed, options.Resamples);
         double[] observed = Statistics(differences, sets, new ulong[flips.Words], options);
         int[] order = [.. Enumerable.Range(0, endpoints).Where(j => !double.IsNaN(observed[j])).OrderBy(j => observed[j])];
         var stepDown = Enumerable.Repeat(-1, endpoints).ToArray();

@@ -5,11 +5,11 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 
 /// <summary>The flips of whole sets that a run compares the data with: random ones, or all there are where these are no more.</summary>
 /// <remarks>A flip is one bit a set, 1 for a changed sign. The data as they are (no bit set) is not among the listed ones.</remarks>
-internal sealed class SignFlips
+internal sealed class CommonFlips
 {
     private readonly long _seed;
 
-    public SignFlips(int sets, long seed, int resamples)
+    public CommonFlips(int sets, long seed, int resamples)
     {
         _seed = seed;
         Exhaustive = sets <= BitOperations.Log2((uint)resamples + 1);
