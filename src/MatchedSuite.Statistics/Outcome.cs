@@ -18,7 +18,9 @@ public enum Outcome
     /// <summary>More sets lack the endpoint's value than the study allows.</summary>
     TooManyMissing,
 
-    /// <summary>The covariates determine the endpoint within every set: its own share cannot be told.</summary>
+    /// <summary>
+    /// The covariates determine the endpoint within every set, or say the same as each other or the design: shares cannot be told apart.
+    /// </summary>
     Collinear,
 
     /// <summary>The likelihood could not be maximised to the accuracy that is promised.</summary>

@@ -46,7 +46,7 @@ public enum Remarks : long
     /// <summary>A covariate is constant within every set or follows from the other covariates; it was left out.</summary>
     CollinearCovariate = 1 << 12,
 
-    /// <summary>The covariates determine the endpoint within every set; no test was made.</summary>
+    /// <summary>The covariates determine the endpoint, or say the same as each other or the design; no test was made.</summary>
     Collinear = 1 << 13,
 
     /// <summary>The likelihood could not be maximised to the accuracy that is promised; no test was made.</summary>
@@ -57,4 +57,6 @@ public enum Remarks : long
 
     /// <summary>The method does not adjust for covariates; the result is unadjusted although covariates were given.</summary>
     Unadjusted = 1 << 16,
+    /// <summary>The variance between subjects is estimated as 0, the end of its range; the subjects' values are then as good as independent.</summary>
+    SingularFit = 1 << 17,
 }

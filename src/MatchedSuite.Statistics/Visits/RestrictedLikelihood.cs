@@ -1,0 +1,123 @@
+using MatchedSuite.Statistics.LinearAlgebra;
+
+namespace MatchedSuite.Statistics.Visits;
+
+/// <summary>Fits a random-intercept model to one endpoint by restricted maximum likelihood.</summary>
+internal static class RestrictedLikelihood
+{
+    // A column whose part free of the columns before it is this small beside itself cannot be told from them.
+    private const double DependentRatio = 1e-10;
+
+    // A spread within subjects of a few units in the last place of the values is rounding.
+    private const double RoundingUnits = 8 * 2.220446049250313e-16;
+
+    /// <summary>The fit, or why there is none.</summary>
+    public static MixedModelFit Maximise(in VisitSample sample, VisitTerm term, in Scratch.Frame frame)
+    {
+        var moments = RandomInterceptMoments.Of(sample, term, frame);
+        int parameters = moments.Parameters, order = parameters + 1, packed = PackedSymmetric.Length(order);
+        if (moments.Subjects < 2 || moments.Observations <= parameters || !EveryGroupSeen(moments))
+            return MixedModelFit.Untested(Outcome.TooFewSets, moments.Subjects, moments.Observations);
+
+        Span<double> total = frame.Doubles(packed), factor = frame.Doubles(packed), smallestPivots = frame.Doubles(order);
+        Total(moments, total);
+        for (int column = 0; column < parameters; column++)
+            smallestPivots[column] = DependentRatio * total[PackedSymmetric.At(column, column)];
+        smallestPivots[parameters] = 0;
+        if (Rank(total, order, smallestPivots, factor) < parameters)
+            return MixedModelFit.Untested(Outcome.Collinear, moments.Subjects, moments.Observations);
+
+        int rankWithin = Rank(moments.Within, order, smallestPivots, factor);
+        double within = factor[^1] * factor[^1];
+        int withinDegrees = moments.Observations - moments.Subjects - rankWithin;
+        int betweenDegrees = moments.Subjects - (parameters - rankWithin);
+        if (withinDegrees < 1 || betweenDegrees < 1)
+            return MixedModelFit.Untested(Outcome.TooFewSets, moments.Subjects, moments.Observations);
+        double rounding = RoundingUnits * moments.LargestMagnitude;
+        if (within <= withinDegrees * rounding * rounding)
+            return MixedModelFit.Untested(Outcome.NoVariation, moments.Subjects, moments.Observations);
+
+        smallestPivots.Clear();
+        var profile = new RandomInterceptProfile(moments, smallestPivots, frame);
+        profile.Evaluate(0);
+        RandomInterceptOptimum.Find(ref profile, moments.Observations, moments.Subjects, within, withinDegrees, betweenDegrees);
+        return Describe(sample, term, moments, profile, frame) with
+        {
+            WithinSquares = within,
+            WithinDegrees = withinDegrees,
+            BetweenDegrees = betweenDegrees,
+        };
+    }
+
+    private static bool EveryGroupSeen(in RandomInterceptMoments moments)
+    {
+        for (int group = 0; group < moments.Groups; group++)
+        {
+            double seen = moments.Within[PackedSymmetric.At(group, group)];
+            for (int size = 0; size < moments.SubjectsBySize.Length; size++)
+                seen += moments.BetweenOf(size + 1)[PackedSymmetric.At(group, group)];
+            if (seen == 0)
+                return false;
+        }
+
+        return true;
+    }
+
+    // Cross-products of all observations, as if there were no subjects.
+    private static void Total(in RandomInterceptMoments moments, Span<double> total)
+    {
+        moments.Within.CopyTo(total);
+        for (int size = 1; size <= moments.SubjectsBySize.Length; size++)
+        {
+            if (moments.SubjectsBySize[size - 1] == 0)
+                continue;
+            var between = moments.BetweenOf(size);
+            for (int at = 0; at < total.Length; at++)
+                total[at] += between[at] / size;
+        }
+    }
+
+    // Independent columns among the fixed effects; the endpoint's own column, the last, does not count.
+    private static int Rank(ReadOnlySpan<double> matrix, int order, ReadOnlySpan<double> smallestPivots, Span<double> factor)
+    {
+        int rank = Cholesky.Factor(matrix, order, smallestPivots, factor);
+        return factor[^1] > 0 ? rank - 1 : rank;
+    }
+
+    private static MixedModelFit Describe(
+        in VisitSample sample, VisitTerm term, scoped in RandomInterceptMoments moments, scoped in RandomInterceptProfile profile, in Scratch.Frame frame)
+    {
+        int parameters = moments.Parameters, free = profile.DegreesOfFreedom;
+        double ratio = profile.Ratio, within = profile.Residuals / free;
+        Span<double> coefficients = frame.Doubles(parameters);
+        for (int i = 0; i < parameters; i++)
+            coefficients[i] = -profile.Residual[i] + (i < moments.Groups ? moments.Centres[^1] : 0);
+
+        // Observed information of −2·log-likelihood in (σ², λ); at the bound λ is no free parameter.
+        double byWithin = free / (within * within), byBoth = -profile.ResidualsSlope / (within * within);
+        double byRatio = profile.LogDeterminantsCurvature + profile.ResidualsCurvature / within;
+        double determinant = byWithin * byRatio - byBoth * byBoth;
+        return new MixedModelFit
+        {
+            Outcome = Outcome.Tested,
+            Remarks = ratio == 0 ? Remarks.SingularFit : Remarks.None,
+            Term = term,
+            Times = sample.Times,
+            Subjects = moments.Subjects,
+            Observations = moments.Observations,
+            Coefficients = coefficients,
+            ColumnMeans = moments.Centres[..^1],
+            VarianceWithin = within,
+            VarianceBetween = ratio * within,
+            VarianceRatio = ratio,
+            RestrictedLogLikelihood = -0.5 * (free * (Math.Log(2 * Math.PI * within) + 1) + profile.LogDeterminants),
+            Score = ratio * profile.Score,
+            Moments = moments,
+            Inverse = profile.Inverse,
+            CrossProductsSlope = profile.CrossProductsSlope,
+            VarianceOfWithin = ratio == 0 ? 2 / byWithin : 2 * byRatio / determinant,
+            VarianceOfRatio = ratio == 0 ? 0 : 2 * byWithin / determinant,
+            CovarianceOfBoth = ratio == 0 ? 0 : -2 * byBoth / determinant,
+        };
+    }
+}
