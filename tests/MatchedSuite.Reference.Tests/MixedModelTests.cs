@@ -81,6 +81,35 @@ public class MixedModelTests
         Expected.Check(interval.High, "shrout_fleiss", "icc", "icc_3_1_ci95_hi");
     }
 
+    /// <summary>
+    /// Base R 4.2.2: dense covariance matrices, likelihood maximised by Newton's steps, Hessian and gradients by Richardson
+    /// extrapolation of central differences; good to about 7 digits.
+    /// </summary>
+    [Fact]
+    public void Satterthwaite_degrees_of_freedom_of_unbalanced_data_are_those_of_numerical_derivatives_in_base_R()
+    {
+        double[] invented =
+        [
+            5.1, 6.3, 7.2, 4.0, double.NaN, 6.6, 6.2, 6.9, 8.8, double.NaN, 5.5, double.NaN,
+            3.9, 5.6, double.NaN, 7.1, 7.4, 9.9, double.NaN, double.NaN, 6.1,
+        ];
+        CheckDegrees(VisitTables.Orthodont(DroppedRows).Sample(), [69.0640238187, 69.3385423329, 69.1624423782], 48.0960783213, 69.3449084917, 69.1541889083);
+        CheckDegrees(VisitSample.Of(invented, [0, 1, 2]), [6.34104645130, 6.34104645130], 7.48866985973, 6.34104645130, 6.40415537202);
+    }
+
+    private static void CheckDegrees(in VisitSample sample, double[] againstFirst, double first, double trend, double omnibus)
+    {
+        const double Digits = 1e-6;
+        var scratch = new Scratch();
+        using var frame = scratch.Open();
+        var fit = MixedModel.Fit(sample, VisitTerm.Means, frame);
+        for (int j = 0; j < againstFirst.Length; j++)
+            Assert.Equal(1, MixedModel.Difference(fit, j + 1, 0, TestOptions.Default, scratch).DegreesOfFreedom / againstFirst[j], Digits);
+        Assert.Equal(1, MixedModel.Contrast(fit, [1], TestOptions.Default, scratch).DegreesOfFreedom / first, Digits);
+        Assert.Equal(1, MixedModel.Trend(fit, TestOptions.Default, scratch).DegreesOfFreedom / trend, Digits);
+        Assert.Equal(1, MixedModel.Omnibus(fit, TestOptions.Default, scratch).DenominatorDegreesOfFreedom / omnibus, Digits);
+    }
+
     private static void CheckMeans(string dataset, VisitTables table, string[] names)
     {
         const string Case = "lmm_visit_factor";

@@ -31,6 +31,9 @@ internal sealed record VisitTables(string[] Subjects, double[] Times, double[] V
     /// <summary>Hollander &amp; Wolfe (1973), p. 147: strength of cotton at falling potash levels.</summary>
     public static VisitTables Cotton() => Wide("cotton_page", "k144", "k108", "k72", "k54", "k36");
 
+    /// <summary>Ratings of three ways of teaching by ten students: the example of SciPy's page on Page's test.</summary>
+    public static VisitTables Teaching() => Wide("teaching_page", "tutorial", "lecture", "seminar");
+
     /// <summary>Tippett (1950): mean breaks of two wools at three tensions.</summary>
     public static VisitTables WarpBreaks() => Long("warpbreaks_means", "wool", "tension", "mean_breaks");
 

@@ -154,11 +154,10 @@ public static class MixedModel
             throw new ArgumentException("A difference of two visits needs a fit with one mean a visit.", nameof(fit));
     }
 
-    // Orthonormal contrasts after Helmert: visit a + 1 against the mean of those before it.
     private static void ContrastRows(in MixedModelFit fit, int contrasts, Span<double> rows)
     {
-        rows.Clear();
         int count = fit.Coefficients.Length;
+        rows.Clear();
         if (fit.Term == VisitTerm.Line)
         {
             rows[1] = 1;
@@ -166,11 +165,7 @@ public static class MixedModel
         }
 
         for (int a = 0; a < contrasts; a++)
-        {
-            double unit = 1 / Math.Sqrt((a + 1.0) * (a + 2.0));
-            rows.Slice(a * count, a + 1).Fill(-unit);
-            rows[a * count + a + 1] = (a + 1) * unit;
-        }
+            HelmertContrasts.Fill(a, rows.Slice(a * count, count));
     }
 
     private static void Combine(ReadOnlySpan<double> rows, ReadOnlySpan<double> shares, int count, Span<double> weights)
