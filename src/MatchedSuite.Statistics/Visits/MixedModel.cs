@@ -55,18 +55,10 @@ public static class MixedModel
             estimate += weights[i] * fit.Coefficients[i];
 
         var contrast = SatterthwaiteContrast.Of(fit, all, frame.Doubles(all.Length));
-        double error = Math.Sqrt(contrast.Variance), df = contrast.DegreesOfFreedom, t = estimate / error;
-        double reach = error * StudentT.UpperQuantile(options.TailShare, df);
-        return new TestResult
+        return StudentTest.Of(estimate, Math.Sqrt(contrast.Variance), contrast.DegreesOfFreedom, options) with
         {
             Sets = fit.Subjects,
             Samples = fit.Observations,
-            Estimate = estimate,
-            StandardError = error,
-            Interval = Interval.Pointing(estimate - reach, estimate + reach, options.Sides),
-            Statistic = t,
-            DegreesOfFreedom = df,
-            P = Tails.ForSides(options.Sides, StudentT.LowerTail(t, df), StudentT.UpperTail(t, df)),
             EffectSize = estimate / Math.Sqrt(fit.VarianceWithin + fit.VarianceBetween),
             Remarks = fit.Remarks,
         };

@@ -13,9 +13,6 @@ namespace MatchedSuite.Statistics.Visits;
 /// </remarks>
 public static class RepeatedMeasuresAnova
 {
-    // A spread of a few units in the last place of the values is rounding.
-    private const double RoundingUnits = 8 * 2.220446049250313e-16;
-
     /// <summary>F with Greenhouse and Geisser's correction.</summary>
     public static TestResult GreenhouseGeisser(in VisitSample sample, TestOptions options, Scratch scratch) =>
         Test(sample, SphericityCorrection.GreenhouseGeisser, scratch);
@@ -49,7 +46,7 @@ public static class RepeatedMeasuresAnova
             meanSquares += mean[a] * mean[a];
         }
 
-        double rounding = RoundingUnits * LargestMagnitude(complete.Values);
+        double rounding = StudentTest.RoundingOf(LargestMagnitude(complete.Values));
         if (trace <= contrasts * rounding * rounding)
             return Untested(Outcome.NoVariation, complete);
         double squares = PackedSymmetric.TraceOfProduct(covariance, covariance, contrasts);

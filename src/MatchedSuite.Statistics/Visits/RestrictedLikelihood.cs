@@ -8,9 +8,6 @@ internal static class RestrictedLikelihood
     // A column whose part free of the columns before it is this small beside itself cannot be told from them.
     private const double DependentRatio = 1e-10;
 
-    // A spread within subjects of a few units in the last place of the values is rounding.
-    private const double RoundingUnits = 8 * 2.220446049250313e-16;
-
     /// <summary>The fit, or why there is none.</summary>
     public static MixedModelFit Maximise(in VisitSample sample, VisitTerm term, in Scratch.Frame frame)
     {
@@ -33,7 +30,7 @@ internal static class RestrictedLikelihood
         int betweenDegrees = moments.Subjects - (parameters - rankWithin);
         if (withinDegrees < 1 || betweenDegrees < 1)
             return MixedModelFit.Untested(Outcome.TooFewSets, moments.Subjects, moments.Observations);
-        double rounding = RoundingUnits * moments.LargestMagnitude;
+        double rounding = StudentTest.RoundingOf(moments.LargestMagnitude);
         if (within <= withinDegrees * rounding * rounding)
             return MixedModelFit.Untested(Outcome.NoVariation, moments.Subjects, moments.Observations);
 
