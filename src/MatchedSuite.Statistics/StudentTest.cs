@@ -1,4 +1,5 @@
 using MatchedSuite.Statistics.Distributions;
+using MatchedSuite.Statistics.Pairs;
 
 namespace MatchedSuite.Statistics;
 
@@ -15,7 +16,7 @@ internal static class StudentTest
     public static TestResult Of(double estimate, double error, double df, TestOptions options)
     {
         double t = estimate / error;
-        double reach = error * StudentT.UpperQuantile(options.TailShare, df);
+        double reach = error * Quantile(options.TailShare, df);
         return new TestResult
         {
             Estimate = estimate,
@@ -26,4 +27,8 @@ internal static class StudentTest
             P = Tails.ForSides(options.Sides, StudentT.LowerTail(t, df), StudentT.UpperTail(t, df)),
         };
     }
+
+    // Whole degrees of freedom recur from endpoint to endpoint and are kept.
+    private static double Quantile(double tailShare, double df) =>
+        df == Math.Floor(df) && df <= int.MaxValue ? StudentTQuantiles.Upper(tailShare, (int)df) : StudentT.UpperQuantile(tailShare, df);
 }

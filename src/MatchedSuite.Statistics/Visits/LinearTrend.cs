@@ -1,3 +1,5 @@
+using MatchedSuite.Statistics.Pairs;
+
 namespace MatchedSuite.Statistics.Visits;
 
 /// <summary>Linear trend over the visits: is the mean of the subjects' least-squares slopes zero?</summary>
@@ -5,7 +7,7 @@ namespace MatchedSuite.Statistics.Visits;
 /// <para>Only subjects seen at every visit enter. Each subject's values give one slope on the times of the visits, equally
 /// spaced or not; the slopes are tested by Student's t with n − 1 degrees of freedom.</para>
 /// <para>Units: estimate, error and interval in endpoint units per unit of time; effect size is the mean slope over its
-/// standard deviation between subjects.</para>
+/// standard deviation between subjects, times Hedges' correction.</para>
 /// <para>Assumes independent subjects and near-normal slopes; nothing about the variances of the visits.</para>
 /// <para>Source: the linear contrast of Fisher (1925), Statistical Methods for Research Workers, tested by Student (1908).
 /// Worked through in docs/methods/linear-trend.md.</para>
@@ -27,15 +29,14 @@ public static class LinearTrend
         for (int i = 0; i < n; i++)
             slopes[i] = Slope(complete.Subject(i), weights, ref largest);
 
-        var moments = SampleMoments.Of(slopes);
-        double rounding = StudentTest.RoundingOf(largest) * SumOfSizes(weights);
-        if (moments.Squares <= n * rounding * rounding)
+        var (mean, deviation) = MeanAndDeviation.Of(slopes, scratch);
+        if (deviation <= StudentTest.RoundingOf(largest) * SumOfSizes(weights))
             return TestResult.Untested(Outcome.NoVariation, n, complete.Values.Length);
-        return StudentTest.Of(moments.Mean, Math.Sqrt(moments.Variance / n), n - 1, options) with
+        return StudentTest.Of(mean, deviation / Math.Sqrt(n), n - 1, options) with
         {
             Sets = n,
             Samples = complete.Values.Length,
-            EffectSize = moments.Mean / Math.Sqrt(moments.Variance),
+            EffectSize = HedgesCorrection.Factor(n - 1) * mean / deviation,
         };
     }
 
@@ -44,7 +45,7 @@ public static class LinearTrend
     /// <param name="weights">Room for one weight a visit.</param>
     internal static void Weights(ReadOnlySpan<double> times, Span<double> weights)
     {
-        double mean = SampleMoments.Of(times).Mean, squares = 0;
+        double mean = FixedLanes.Sum(times) / times.Length, squares = 0;
         for (int j = 0; j < times.Length; j++)
         {
             weights[j] = times[j] - mean;

@@ -50,10 +50,7 @@ public static class MixedModel
         Span<double> all = frame.Doubles(fit.Coefficients.Length);
         all.Clear();
         weights.CopyTo(all);
-        double estimate = 0;
-        for (int i = 0; i < weights.Length; i++)
-            estimate += weights[i] * fit.Coefficients[i];
-
+        double estimate = fit.Combine(weights);
         var contrast = SatterthwaiteContrast.Of(fit, all, frame.Doubles(all.Length));
         return StudentTest.Of(estimate, Math.Sqrt(contrast.Variance), contrast.DegreesOfFreedom, options) with
         {
@@ -117,7 +114,7 @@ public static class MixedModel
         {
             Combine(rows, vectors.Slice(a * contrasts, contrasts), count, weights);
             var one = SatterthwaiteContrast.Of(fit, weights, turned);
-            double estimate = Dot(weights, fit.Coefficients);
+            double estimate = fit.Combine(weights);
             f += estimate * estimate / one.Variance;
             df = one.DegreesOfFreedom;
             smallest = Math.Min(smallest, df);

@@ -60,6 +60,9 @@ public readonly ref struct MixedModelFit
     /// <summary>Degrees of freedom between subjects beside the fixed effects.</summary>
     public int BetweenDegrees { get; internal init; }
 
+    // Coefficients with the endpoint's origin taken off the levels: contrasts of them lose nothing to a common level.
+    internal ReadOnlySpan<double> Relative { get; init; }
+
     internal RandomInterceptMoments Moments { get; init; }
 
     internal ReadOnlySpan<double> Inverse { get; init; }
@@ -78,6 +81,25 @@ public readonly ref struct MixedModelFit
 
     /// <summary>Standard error of a fixed effect.</summary>
     public double StandardError(int place) => Math.Sqrt(Covariance(place, place));
+
+    // A sum of weights this small beside their sizes is 0 but for rounding, and the origin drops out.
+    private const double NoLevel = 1e-14;
+
+    /// <summary>Σ weights · coefficients over the leading coefficients.</summary>
+    internal double Combine(ReadOnlySpan<double> weights)
+    {
+        double sum = 0, level = 0, sizes = 0;
+        for (int i = 0; i < weights.Length; i++)
+        {
+            sum += weights[i] * Relative[i];
+            if (i >= Moments.Groups)
+                continue;
+            level += weights[i];
+            sizes += Math.Abs(weights[i]);
+        }
+
+        return Math.Abs(level) <= NoLevel * sizes ? sum : sum + level * Moments.Origin;
+    }
 
     internal static MixedModelFit Untested(Outcome outcome, int subjects, int observations) => new()
     {

@@ -8,7 +8,8 @@ namespace MatchedSuite.Statistics.Visits;
 /// line, covariates), last the endpoint; order = parameters + 1. Cross-products are split into those within subjects and,
 /// by the number m of observations a subject has, those of the subjects' sums. With the variance ratio λ the weighted
 /// cross-products are W + Σ S_m / (m(1 + λm)): only positive parts, so nothing cancels.</para>
-/// <para>Measured columns are centred: <see cref="Centres"/> holds what was taken off, the endpoint's last.</para>
+/// <para>Measured columns are centred: <see cref="Centres"/> holds what was taken off. From the endpoint its first value is
+/// taken, then each group's mean: what a common level or the visits explain never meets the squares, so it costs no digit.</para>
 /// </remarks>
 internal readonly ref struct RandomInterceptMoments
 {
@@ -39,8 +40,14 @@ internal readonly ref struct RandomInterceptMoments
     /// <summary>Number of subjects with m = 1, 2, … observations.</summary>
     public ReadOnlySpan<int> SubjectsBySize { get; private init; }
 
-    /// <summary>What was taken off the measured columns; the endpoint's comes last.</summary>
+    /// <summary>What was taken off the measured columns without the endpoint.</summary>
     public ReadOnlySpan<double> Centres { get; private init; }
+
+    /// <summary>What was taken off every value of the endpoint.</summary>
+    public double Origin { get; private init; }
+
+    /// <summary>What was taken off the endpoint beside <see cref="Origin"/>, group by group.</summary>
+    public ReadOnlySpan<double> Levels { get; private init; }
 
     /// <summary>Gathers the moments of a sample.</summary>
     public static RandomInterceptMoments Of(in VisitSample sample, VisitTerm term, in Scratch.Frame frame)
@@ -52,7 +59,7 @@ internal readonly ref struct RandomInterceptMoments
         int packed = PackedSymmetric.Length(groups + measured);
         Span<double> within = frame.Doubles(packed);
         Span<double> between = frame.Doubles(packed * visits);
-        Span<double> centres = frame.Doubles(measured);
+        Span<double> centres = frame.Doubles(measured), levels = frame.Doubles(groups);
         Span<int> bySize = frame.Integers(visits);
         Span<double> means = frame.Doubles(sample.Subjects * measured);
         Span<int> sizes = frame.Integers(sample.Subjects);
@@ -62,13 +69,17 @@ internal readonly ref struct RandomInterceptMoments
         bySize.Clear();
 
         Origins(sample, times, centres);
+        double origin = centres[^1];
+        GroupMeans(sample, origin, levels, frame);
+        centres[^1] = 0;
         Span<double> rows = frame.Doubles(visits * measured);
         int observations = 0, subjects = 0, placed = 0;
         double largest = 0;
         for (int i = 0; i < sample.Subjects; i++)
         {
             Span<int> present = places.Slice(placed, visits);
-            int size = Read(sample, i, times, centres, rows, present, ref largest);
+            int size = Read(sample, i, times, centres, rows, present);
+            TakeLevels(rows[..(size * measured)], present[..size], origin, levels, ref largest);
             sizes[i] = size;
             placed += size;
             if (size == 0)
@@ -80,6 +91,8 @@ internal readonly ref struct RandomInterceptMoments
         }
 
         Recentre(means, sizes, observations, centres);
+        foreach (ref double level in levels)
+            level += centres[^1];
         AddBetween(means, sizes, places, visits, groups, measured, between);
         SpreadComplete(bySize[visits - 1], groups, between[(packed * (visits - 1))..]);
         AddGroupsWithin(between, bySize, groups, packed, within);
@@ -93,11 +106,13 @@ internal readonly ref struct RandomInterceptMoments
             Within = within,
             Between = between,
             SubjectsBySize = bySize,
-            Centres = centres,
+            Centres = centres[..^1],
+            Origin = origin,
+            Levels = levels,
         };
     }
 
-    // The first observation is a good enough origin: what is left is of the size of the spread, so squares lose nothing.
+    // The first observation is a good enough origin for a first step: what is left is of the size of the spread.
     private static void Origins(in VisitSample sample, int times, Span<double> origins)
     {
         origins.Clear();
@@ -112,6 +127,24 @@ internal readonly ref struct RandomInterceptMoments
             origins[^1] = sample.Values[at];
             return;
         }
+    }
+
+    private static void GroupMeans(in VisitSample sample, double origin, Span<double> levels, in Scratch.Frame frame)
+    {
+        Span<int> counts = frame.Integers(levels.Length);
+        counts.Clear();
+        levels.Clear();
+        for (int at = 0; at < sample.Values.Length; at++)
+        {
+            if (!IsObserved(sample, at))
+                continue;
+            int group = levels.Length > 1 ? at % sample.Visits : 0;
+            levels[group] += sample.Values[at] - origin;
+            counts[group]++;
+        }
+
+        for (int group = 0; group < levels.Length; group++)
+            levels[group] = counts[group] > 0 ? levels[group] / counts[group] : 0;
     }
 
     private static bool IsObserved(in VisitSample sample, int at)
@@ -129,7 +162,7 @@ internal readonly ref struct RandomInterceptMoments
     }
 
     private static int Read(
-        in VisitSample sample, int subject, int times, ReadOnlySpan<double> origins, Span<double> rows, Span<int> present, ref double largest)
+        in VisitSample sample, int subject, int times, ReadOnlySpan<double> origins, Span<double> rows, Span<int> present)
     {
         int size = 0, to = 0, covariates = sample.CovariateCount, visits = sample.Visits;
         for (int j = 0; j < visits; j++)
@@ -142,12 +175,22 @@ internal readonly ref struct RandomInterceptMoments
                 rows[to++] = sample.Times[j] - origins[0];
             for (int q = 0; q < covariates; q++)
                 rows[to++] = sample.Covariates[at * covariates + q] - origins[times + q];
-            double value = sample.Values[at];
-            largest = Math.Max(largest, Math.Abs(value));
-            rows[to++] = value - origins[^1];
+            rows[to++] = sample.Values[at];
         }
 
         return size;
+    }
+
+    private static void TakeLevels(
+        Span<double> rows, ReadOnlySpan<int> present, double origin, ReadOnlySpan<double> levels, ref double largest)
+    {
+        int measured = rows.Length / Math.Max(1, present.Length);
+        for (int o = 0; o < present.Length; o++)
+        {
+            ref double value = ref rows[(o + 1) * measured - 1];
+            largest = Math.Max(largest, Math.Abs(value));
+            value = value - origin - levels[levels.Length > 1 ? present[o] : 0];
+        }
     }
 
     private static void AddWithin(

@@ -30,8 +30,10 @@ internal static class RestrictedLikelihood
         int betweenDegrees = moments.Subjects - (parameters - rankWithin);
         if (withinDegrees < 1 || betweenDegrees < 1)
             return MixedModelFit.Untested(Outcome.TooFewSets, moments.Subjects, moments.Observations);
+        // Rounding is left by the values themselves, and by taking from their squares what covariates explain.
         double rounding = StudentTest.RoundingOf(moments.LargestMagnitude);
-        if (within <= withinDegrees * rounding * rounding)
+        double explained = StudentTest.RoundingOf(moments.Within[^1]);
+        if (within <= withinDegrees * rounding * rounding + explained)
             return MixedModelFit.Untested(Outcome.NoVariation, moments.Subjects, moments.Observations);
 
         smallestPivots.Clear();
@@ -86,9 +88,13 @@ internal static class RestrictedLikelihood
     {
         int parameters = moments.Parameters, free = profile.DegreesOfFreedom;
         double ratio = profile.Ratio, within = profile.Residuals / free;
-        Span<double> coefficients = frame.Doubles(parameters);
+        Span<double> relative = frame.Doubles(parameters), coefficients = frame.Doubles(parameters);
         for (int i = 0; i < parameters; i++)
-            coefficients[i] = -profile.Residual[i] + (i < moments.Groups ? moments.Centres[^1] : 0);
+        {
+            bool isLevel = i < moments.Groups;
+            relative[i] = (isLevel ? moments.Levels[i] : 0) - profile.Residual[i];
+            coefficients[i] = (isLevel ? moments.Origin : 0) + relative[i];
+        }
 
         // Observed information of −2·log-likelihood in (σ², λ); at the bound λ is no free parameter.
         double byWithin = free / (within * within), byBoth = -profile.ResidualsSlope / (within * within);
@@ -103,7 +109,8 @@ internal static class RestrictedLikelihood
             Subjects = moments.Subjects,
             Observations = moments.Observations,
             Coefficients = coefficients,
-            ColumnMeans = moments.Centres[..^1],
+            Relative = relative,
+            ColumnMeans = moments.Centres,
             VarianceWithin = within,
             VarianceBetween = ratio * within,
             VarianceRatio = ratio,
