@@ -1,21 +1,21 @@
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>The n(n+1)/2 averages of two differences (each with itself too), in order, without listing them.</summary>
-/// <remarks>Source: Walsh (1949), Annals of Mathematical Statistics 20, 64-81. Ranks are selected by <see cref="WalshSelection"/>.</remarks>
+/// <remarks>Source: Walsh (1949), Annals of Mathematical Statistics 20, 64-81. Ranks are selected by <see cref="PairwiseSumSelection"/>.</remarks>
 internal readonly ref struct WalshAverages
 {
     // For normal differences the averages stand at their centre this many interquartile ranges apart, times their number.
     private const double CentralSpacing = 1.314;
 
     private readonly ReadOnlySpan<double> _halves;
-    private readonly WalshSelection _selection;
+    private readonly PairwiseSumSelection _selection;
     private readonly double _spacing;
     private readonly double _centre;
 
     private WalshAverages(ReadOnlySpan<double> sorted, ReadOnlySpan<double> halves, in Scratch.Frame frame)
     {
         _halves = halves;
-        _selection = new WalshSelection(halves, frame);
+        _selection = new PairwiseSumSelection(halves, frame);
         int n = sorted.Length;
         // First guesses only: they set how soon a selection ends, never what it gives.
         double lowerQuartile = sorted[n / 4], upperQuartile = sorted[n - 1 - (n / 4)];

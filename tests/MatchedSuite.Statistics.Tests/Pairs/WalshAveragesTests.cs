@@ -38,7 +38,7 @@ public class WalshAveragesTests
                 double[] halves = [.. differences.Select(d => 0.5 * d)];
                 var scratch = new Scratch();
                 using var frame = scratch.Open();
-                var selection = new WalshSelection(halves, frame);
+                var selection = new PairwiseSumSelection(halves, frame);
                 foreach (int rank in new[] { 1, 2, (listed.Length / 7) + 1, (listed.Length + 1) / 2, listed.Length })
                 {
                     if (rank <= listed.Length)

@@ -4,31 +4,38 @@ using System.Runtime.Intrinsics;
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>
-/// The sums h(i) + h(j), i ≤ j, of ascending values h as rows of an ascending matrix, and in each row the columns that are still
-/// candidates; a value cuts them along a staircase.
+/// The sums h(i) + h(j), i ≤ j, of ascending values h, or a(i) + b(j) of two ascending columns, as rows of an ascending matrix,
+/// and in each row the columns that are still candidates; a value cuts them along a staircase.
 /// </summary>
 /// <remarks>Each walk costs O(rows + columns passed), at most O(n), whatever the value.</remarks>
-internal readonly ref struct WalshStaircase
+internal readonly ref struct PairwiseSumStaircase
 {
     // Infinities before and after the values, so that four neighbours can always be read at once.
     private const int Padding = 4;
 
+    private readonly ReadOnlySpan<double> _rows;
     private readonly ReadOnlySpan<double> _padded;
+    private readonly bool _isTriangle;
     private readonly Span<int> _left;
     private readonly Span<int> _right;
     private readonly Span<int> _cut;
 
-    /// <summary>Takes ascending values into the memory of <paramref name="frame"/>.</summary>
-    public WalshStaircase(ReadOnlySpan<double> halves, in Scratch.Frame frame)
+    /// <summary>Takes ascending values, whose sums with themselves are wanted, into the memory of <paramref name="frame"/>.</summary>
+    public PairwiseSumStaircase(ReadOnlySpan<double> halves, in Scratch.Frame frame)
+        : this(halves, halves, frame) => _isTriangle = true;
+
+    /// <summary>Takes two ascending columns into the memory of <paramref name="frame"/>.</summary>
+    public PairwiseSumStaircase(ReadOnlySpan<double> rows, ReadOnlySpan<double> columns, in Scratch.Frame frame)
     {
-        Span<double> padded = frame.Doubles(halves.Length + (2 * Padding));
+        Span<double> padded = frame.Doubles(columns.Length + (2 * Padding));
         padded[..Padding].Fill(double.NegativeInfinity);
-        halves.CopyTo(padded[Padding..]);
+        columns.CopyTo(padded[Padding..]);
         padded[^Padding..].Fill(double.PositiveInfinity);
+        _rows = rows;
         _padded = padded;
-        _left = frame.Integers(halves.Length);
-        _right = frame.Integers(halves.Length);
-        _cut = frame.Integers(halves.Length);
+        _left = frame.Integers(rows.Length);
+        _right = frame.Integers(rows.Length);
+        _cut = frame.Integers(rows.Length);
     }
 
     /// <summary>From where a cut is sought.</summary>
@@ -50,15 +57,21 @@ internal readonly ref struct WalshStaircase
     /// <summary>Column after the last candidate of each row.</summary>
     public ReadOnlySpan<int> Right => _right;
 
+    /// <summary>Number of columns.</summary>
+    public int Columns => _padded.Length - (2 * Padding);
+
+    /// <summary>Number of sums.</summary>
+    public long Count => _isTriangle ? (long)Columns * (Columns + 1) / 2 : (long)_rows.Length * Columns;
+
     /// <summary>One sum.</summary>
-    public double Sum(int row, int column) => Half(row) + Half(column);
+    public double Sum(int row, int column) => _rows[row] + Column(column);
 
     /// <summary>Makes every sum a candidate.</summary>
     public void Open()
     {
         for (int row = 0; row < _left.Length; row++)
-            _left[row] = row;
-        _right.Fill(_right.Length);
+            _left[row] = _isTriangle ? row : 0;
+        _right.Fill(Columns);
     }
 
     /// <summary>Cuts the candidates of the rows <paramref name="first"/> .. <paramref name="end"/> − 1 at a value.</summary>
@@ -96,9 +109,9 @@ internal readonly ref struct WalshStaircase
         for (int row = first; row < beyond; row++)
         {
             int left = _left[row];
-            double half = Half(row);
+            double own = _rows[row];
             end = Math.Min(end, _right[row]);
-            while (end > left && half + Half(end - 1) >= value)
+            while (end > left && own + Column(end - 1) >= value)
                 end--;
             _cut[row] = Math.Max(end, left);
         }
@@ -112,13 +125,13 @@ internal readonly ref struct WalshStaircase
         for (int row = end - 1; row >= first; row--)
         {
             int cut = _left[row];
-            double half = Half(row);
-            int steps = Passed(Vector256.LessThan(Vector256.Create(_padded.Slice(cut + Padding, Padding)) + Vector256.Create(half), values));
+            double own = _rows[row];
+            int steps = Passed(Vector256.LessThan(Vector256.Create(_padded.Slice(cut + Padding, Padding)) + Vector256.Create(own), values));
             cut += steps;
             if (steps == Padding)
             {
                 cut = Math.Max(cut, below);
-                while (cut < _right[row] && half + Half(cut) < value)
+                while (cut < _right[row] && own + Column(cut) < value)
                     cut++;
             }
 
@@ -134,13 +147,13 @@ internal readonly ref struct WalshStaircase
         for (int row = first; row < end; row++)
         {
             int cut = _right[row];
-            double half = Half(row);
-            int steps = Passed(Vector256.GreaterThanOrEqual(Vector256.Create(_padded.Slice(cut, Padding)) + Vector256.Create(half), values));
+            double own = _rows[row];
+            int steps = Passed(Vector256.GreaterThanOrEqual(Vector256.Create(_padded.Slice(cut, Padding)) + Vector256.Create(own), values));
             cut -= steps;
             if (steps == Padding)
             {
                 cut = Math.Min(cut, above);
-                while (cut > _left[row] && half + Half(cut - 1) >= value)
+                while (cut > _left[row] && own + Column(cut - 1) >= value)
                     cut--;
             }
 
@@ -151,5 +164,5 @@ internal readonly ref struct WalshStaircase
 
     private static int Passed(Vector256<double> comparison) => BitOperations.PopCount(comparison.ExtractMostSignificantBits());
 
-    private double Half(int place) => _padded[place + Padding];
+    private double Column(int place) => _padded[place + Padding];
 }

@@ -1,6 +1,9 @@
 namespace MatchedSuite.Statistics.Pairs;
 
-/// <summary>Selects one rank among the sums h(i) + h(j), i ≤ j, of ascending values h, in O(n log n) and without randomness.</summary>
+/// <summary>
+/// Selects one rank among the sums h(i) + h(j), i ≤ j, of ascending values h, or a(i) + b(j) of two ascending columns, in
+/// O(n log n) and without randomness.
+/// </summary>
 /// <remarks>
 /// <para>The sums form a matrix that ascends along rows and columns, so those below a value are bounded by a staircase that one
 /// walk of O(n) finds. Candidates are cut by such staircases until few are left, and those are sorted. The cutting values follow
@@ -9,7 +12,7 @@ namespace MatchedSuite.Statistics.Pairs;
 /// <para>Sources: Johnson and Mizoguchi (1978), SIAM Journal on Computing 7, 147-153; Monahan (1984), ACM Transactions on
 /// Mathematical Software 10, 265-270.</para>
 /// </remarks>
-internal readonly ref struct WalshSelection
+internal readonly ref struct PairwiseSumSelection
 {
     // Sorting this many candidates costs about as much as one more walk.
     private const int SortedAtOnce = 48;
@@ -24,29 +27,41 @@ internal readonly ref struct WalshSelection
     // Cuts that may remove less than a quarter before the sure way is taken.
     private const int PatientCuts = 2;
 
-    private readonly WalshStaircase _sums;
+    private readonly PairwiseSumStaircase _sums;
     private readonly Span<int> _weights;
     private readonly Span<double> _rowMedians;
     private readonly Span<double> _few;
 
-    /// <summary>Prepares selections over the sums of ascending <paramref name="halves"/>, in the memory of <paramref name="frame"/>.</summary>
-    public WalshSelection(ReadOnlySpan<double> halves, in Scratch.Frame frame)
+    /// <summary>Prepares selections over the sums h(i) + h(j), i ≤ j, of ascending <paramref name="halves"/>, in the memory of <paramref name="frame"/>.</summary>
+    public PairwiseSumSelection(ReadOnlySpan<double> halves, in Scratch.Frame frame)
+        : this(new PairwiseSumStaircase(halves, frame), frame)
     {
-        _sums = new WalshStaircase(halves, frame);
-        _weights = frame.Integers(halves.Length);
-        _rowMedians = frame.Doubles(halves.Length);
+    }
+
+    /// <summary>Prepares selections over all sums of a row and a column, both ascending, in the memory of <paramref name="frame"/>.</summary>
+    public PairwiseSumSelection(ReadOnlySpan<double> rows, ReadOnlySpan<double> columns, in Scratch.Frame frame)
+        : this(new PairwiseSumStaircase(rows, columns, frame), frame)
+    {
+    }
+
+    private PairwiseSumSelection(PairwiseSumStaircase sums, in Scratch.Frame frame)
+    {
+        _sums = sums;
+        int rows = sums.Left.Length;
+        _weights = frame.Integers(rows);
+        _rowMedians = frame.Doubles(rows);
         _few = frame.Doubles(SortedAtOnce);
     }
 
     /// <summary>The sum of rank <paramref name="rank"/>, counted from 1 for the smallest.</summary>
-    /// <param name="rank">Between 1 and n(n+1)/2.</param>
+    /// <param name="rank">Between 1 and the number of sums.</param>
     /// <param name="guess">Where to cut first.</param>
     /// <param name="spacing">Guessed distance between neighbouring sums near the rank.</param>
     public double Select(long rank, double guess, double spacing)
     {
         var open = Everything();
         double cut = guess, lastValue = double.NaN, lastCount = double.NaN;
-        var walk = WalshStaircase.Walk.Whole;
+        var walk = PairwiseSumStaircase.Walk.Whole;
         int idle = 0;
         while (open.Candidates > SortedAtOnce)
         {
@@ -62,7 +77,7 @@ internal readonly ref struct WalshSelection
                 double overshoot = (LeastOvershoot + (OvershootPerStep * Math.Abs(step))) * (1 << idle);
                 cut += spacing * (step + Math.CopySign(overshoot, step));
                 bool isNear = Math.Abs(step) + overshoot <= NearPerRow * (open.EndRow - open.FirstRow);
-                walk = !isNear ? WalshStaircase.Walk.Whole : step > 0 ? WalshStaircase.Walk.UpFromLeft : WalshStaircase.Walk.DownFromRight;
+                walk = !isNear ? PairwiseSumStaircase.Walk.Whole : step > 0 ? PairwiseSumStaircase.Walk.UpFromLeft : PairwiseSumStaircase.Walk.DownFromRight;
             }
 
             idle = open.Candidates > before - (before / 4) ? idle + 1 : 0;
@@ -77,9 +92,9 @@ internal readonly ref struct WalshSelection
                 continue;
 
             double middle = MiddleRowMedian(open);
-            open = CutAt(middle, rank, open, WalshStaircase.Walk.Whole, out _);
+            open = CutAt(middle, rank, open, PairwiseSumStaircase.Walk.Whole, out _);
             if (open.Low == middle)
-                open = CutAt(Math.BitIncrement(middle), rank, open, WalshStaircase.Walk.Whole, out _);
+                open = CutAt(Math.BitIncrement(middle), rank, open, PairwiseSumStaircase.Walk.Whole, out _);
             if (open.Low == middle)
                 return middle;
             idle = 0;
@@ -91,12 +106,12 @@ internal readonly ref struct WalshSelection
     private Bracket Everything()
     {
         _sums.Open();
-        int n = _sums.Left.Length;
-        return new Bracket(0, n, 0, (long)n * (n + 1) / 2, _sums.Sum(0, 0), _sums.Sum(n - 1, n - 1));
+        int rows = _sums.Left.Length;
+        return new Bracket(0, rows, 0, _sums.Count, _sums.Sum(0, 0), _sums.Sum(rows - 1, _sums.Columns - 1));
     }
 
     // Splits the candidates into those below the value and the others, and keeps the part that holds the rank.
-    private Bracket CutAt(double value, long rank, in Bracket open, WalshStaircase.Walk walk, out long count)
+    private Bracket CutAt(double value, long rank, in Bracket open, PairwiseSumStaircase.Walk walk, out long count)
     {
         long below = _sums.CutAt(value, open.FirstRow, open.EndRow, walk);
         count = open.Below + below;
