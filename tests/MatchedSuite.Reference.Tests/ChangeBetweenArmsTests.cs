@@ -9,7 +9,7 @@ namespace MatchedSuite.Reference.Tests;
 /// </summary>
 public class ChangeBetweenArmsTests
 {
-    private delegate TestResult Method(in ArmSample sample, TestOptions options, Scratch scratch);
+    internal delegate TestResult Method(in ArmSample sample, TestOptions options, Scratch scratch);
 
     [Theory]
     [InlineData("CBT")]
@@ -121,7 +121,7 @@ public class ChangeBetweenArmsTests
         return 2;
     }
 
-    private static TestResult Run(Method method, string arm, Sides sides)
+    internal static TestResult Run(Method method, string arm, Sides sides)
     {
         var scratch = new Scratch();
         using var frame = scratch.Open();

@@ -51,7 +51,7 @@ public class CrossoverTests
         Assert.Equal(1.94786995076911329, less.Interval.High, Digits);
     }
 
-    private static TestResult Binary(Sides sides)
+    internal static TestResult Binary(Sides sides)
     {
         (double First, double Second, TreatmentSequence Sequence, int Subjects)[] table =
         [
@@ -66,13 +66,21 @@ public class CrossoverTests
         return MainlandGart.Run(sample, new TestOptions { Sides = sides }, scratch);
     }
 
-    private static void Check(Method method, double estimate, double error, double t, double p, double low, double high)
+    internal static (TestResult Treatment, TestResult Period, TestResult CarryOver) Invented() =>
+        (Run(CrossoverT.Run), Run(CrossoverT.Period), Run(CrossoverT.CarryOver));
+
+    private static TestResult Run(Method method)
     {
         TreatmentSequence[] sequences =
             [.. Enumerable.Repeat(TreatmentSequence.IndexFirst, 6), .. Enumerable.Repeat(TreatmentSequence.ReferenceFirst, 5)];
         var scratch = new Scratch();
         using var frame = scratch.Open();
-        var result = method(CrossoverSample.Of(First, Second, sequences, frame), TestOptions.Default, scratch);
+        return method(CrossoverSample.Of(First, Second, sequences, frame), TestOptions.Default, scratch);
+    }
+
+    private static void Check(Method method, double estimate, double error, double t, double p, double low, double high)
+    {
+        var result = Run(method);
         Assert.Equal(1, result.Estimate / estimate, 1e-12);
         Assert.Equal(1, result.StandardError / error, 1e-12);
         Assert.Equal(1, result.Statistic / t, 1e-12);

@@ -10,7 +10,7 @@ namespace MatchedSuite.Reference.Tests;
 /// </summary>
 public class MixedModelTests
 {
-    private static readonly HashSet<int> DroppedRows = [3, 10, 17, 18, 40, 55, 77, 90, 101];
+    internal static readonly HashSet<int> DroppedRows = [3, 10, 17, 18, 40, 55, 77, 90, 101];
 
     [Fact]
     public void Orthodont_visits_as_categories_give_every_number_of_the_reference() =>
