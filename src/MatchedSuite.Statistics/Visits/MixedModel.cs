@@ -50,13 +50,13 @@ public static class MixedModel
         Span<double> all = frame.Doubles(fit.Coefficients.Length);
         all.Clear();
         weights.CopyTo(all);
-        double estimate = fit.Combine(weights);
+        double estimate = fit.Combine(weights), scale = fit.Moments.Scale;
         var contrast = SatterthwaiteContrast.Of(fit, all, frame.Doubles(all.Length));
-        return StudentTest.Of(estimate, Math.Sqrt(contrast.Variance), contrast.DegreesOfFreedom, options) with
+        return StudentTest.Of(estimate, scale * Math.Sqrt(contrast.Variance), contrast.DegreesOfFreedom, options) with
         {
             Sets = fit.Subjects,
             Samples = fit.Observations,
-            EffectSize = estimate / Math.Sqrt(fit.VarianceWithin + fit.VarianceBetween),
+            EffectSize = estimate / (scale * Math.Sqrt(fit.ScaledWithin * (1 + fit.VarianceRatio))),
             Remarks = fit.Remarks,
         };
     }
@@ -114,7 +114,7 @@ public static class MixedModel
         {
             Combine(rows, vectors.Slice(a * contrasts, contrasts), count, weights);
             var one = SatterthwaiteContrast.Of(fit, weights, turned);
-            double estimate = fit.Combine(weights);
+            double estimate = fit.Combine(weights) / fit.Moments.Scale;
             f += estimate * estimate / one.Variance;
             df = one.DegreesOfFreedom;
             smallest = Math.Min(smallest, df);

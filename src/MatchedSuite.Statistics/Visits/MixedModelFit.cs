@@ -34,10 +34,10 @@ public readonly ref struct MixedModelFit
     public ReadOnlySpan<double> ColumnMeans { get; internal init; }
 
     /// <summary>Variance within subjects, squared endpoint unit.</summary>
-    public double VarianceWithin { get; internal init; }
+    public double VarianceWithin => ScaledWithin * Moments.Scale * Moments.Scale;
 
     /// <summary>Variance between subjects, squared endpoint unit; 0 at the bound.</summary>
-    public double VarianceBetween { get; internal init; }
+    public double VarianceBetween => VarianceRatio * VarianceWithin;
 
     /// <summary>Variance between over variance within.</summary>
     public double VarianceRatio { get; internal init; }
@@ -51,10 +51,7 @@ public readonly ref struct MixedModelFit
     /// <summary>Slope of the profile deviance in the logarithm of the variance ratio: 0 up to rounding at a peak inside.</summary>
     public double Score { get; internal init; }
 
-    /// <summary>Residual sum of squares with subjects as fixed effects.</summary>
-    public double WithinSquares { get; internal init; }
-
-    /// <summary>Degrees of freedom of <see cref="WithinSquares"/>.</summary>
+    /// <summary>Degrees of freedom of the residual sum of squares with subjects as fixed effects.</summary>
     public int WithinDegrees { get; internal init; }
 
     /// <summary>Degrees of freedom between subjects beside the fixed effects.</summary>
@@ -65,11 +62,16 @@ public readonly ref struct MixedModelFit
 
     internal RandomInterceptMoments Moments { get; init; }
 
+    // Variance within subjects, and residual squares with subjects as fixed effects, in squared units of Moments.Scale.
+    internal double ScaledWithin { get; init; }
+
+    internal double ScaledWithinSquares { get; init; }
+
     internal ReadOnlySpan<double> Inverse { get; init; }
 
     internal ReadOnlySpan<double> CrossProductsSlope { get; init; }
 
-    // Covariance of the estimates of (variance within, variance ratio), from the observed information.
+    // Covariance of the estimates of (scaled variance within, variance ratio), from the observed information.
     internal double VarianceOfWithin { get; init; }
 
     internal double VarianceOfRatio { get; init; }
@@ -80,7 +82,7 @@ public readonly ref struct MixedModelFit
     public double Covariance(int first, int second) => VarianceWithin * Inverse[PackedSymmetric.At(first, second)];
 
     /// <summary>Standard error of a fixed effect.</summary>
-    public double StandardError(int place) => Math.Sqrt(Covariance(place, place));
+    public double StandardError(int place) => Moments.Scale * Math.Sqrt(ScaledWithin * Inverse[PackedSymmetric.At(place, place)]);
 
     // A sum of weights this small beside their sizes is 0 but for rounding, and the origin drops out.
     private const double NoLevel = 1e-14;
@@ -106,12 +108,10 @@ public readonly ref struct MixedModelFit
         Outcome = outcome,
         Subjects = subjects,
         Observations = observations,
-        VarianceWithin = double.NaN,
-        VarianceBetween = double.NaN,
+        ScaledWithin = double.NaN,
         VarianceRatio = double.NaN,
         RestrictedLogLikelihood = double.NaN,
         Score = double.NaN,
-        WithinSquares = double.NaN,
         Remarks = TestResult.Untested(outcome, subjects, observations).Remarks,
     };
 }

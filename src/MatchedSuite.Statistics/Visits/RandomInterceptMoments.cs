@@ -4,12 +4,10 @@ namespace MatchedSuite.Statistics.Visits;
 
 /// <summary>Everything the likelihood of a random-intercept model needs to know of one endpoint.</summary>
 /// <remarks>
-/// <para>Columns: first the group columns (one indicator a visit, or the constant), then the measured columns (time of a
-/// line, covariates), last the endpoint; order = parameters + 1. Cross-products are split into those within subjects and,
-/// by the number m of observations a subject has, those of the subjects' sums. With the variance ratio λ the weighted
-/// cross-products are W + Σ S_m / (m(1 + λm)): only positive parts, so nothing cancels.</para>
-/// <para>Measured columns are centred: <see cref="Centres"/> holds what was taken off. From the endpoint its first value is
-/// taken, then each group's mean: what a common level or the visits explain never meets the squares, so it costs no digit.</para>
+/// <para>Columns as <see cref="RandomInterceptColumns"/> gives them; order = parameters + 1, the endpoint last. Cross-products are
+/// split into those within subjects and, by the number m of observations a subject has, those of the subjects' sums. With
+/// the variance ratio λ the weighted cross-products are W + Σ S_m / (m(1 + λm)): only positive parts, so nothing cancels.</para>
+/// <para>The endpoint is in units of <see cref="Scale"/>.</para>
 /// </remarks>
 internal readonly ref struct RandomInterceptMoments
 {
@@ -25,8 +23,11 @@ internal readonly ref struct RandomInterceptMoments
     /// <summary>Observations with value and covariates.</summary>
     public int Observations { get; private init; }
 
-    /// <summary>The largest absolute value of the endpoint, for judging what is rounding.</summary>
+    /// <summary>The largest absolute value of the endpoint in its own unit, for judging what is rounding.</summary>
     public double LargestMagnitude { get; private init; }
+
+    /// <summary>Endpoint units that are 1 here; a power of two.</summary>
+    public double Scale { get; private init; }
 
     /// <summary>Packed cross-products within subjects.</summary>
     public ReadOnlySpan<double> Within { get; private init; }
@@ -43,45 +44,31 @@ internal readonly ref struct RandomInterceptMoments
     /// <summary>What was taken off the measured columns without the endpoint.</summary>
     public ReadOnlySpan<double> Centres { get; private init; }
 
-    /// <summary>What was taken off every value of the endpoint.</summary>
+    /// <summary>What was taken off every value of the endpoint, in its own unit.</summary>
     public double Origin { get; private init; }
 
-    /// <summary>What was taken off the endpoint beside <see cref="Origin"/>, group by group.</summary>
+    /// <summary>What was taken off the endpoint beside <see cref="Origin"/>, group by group, in its own unit.</summary>
     public ReadOnlySpan<double> Levels { get; private init; }
 
     /// <summary>Gathers the moments of a sample.</summary>
-    public static RandomInterceptMoments Of(in VisitSample sample, VisitTerm term, in Scratch.Frame frame)
+    public static RandomInterceptMoments Of(scoped in VisitSample sample, VisitTerm term, in Scratch.Frame frame)
     {
-        int visits = sample.Visits;
-        int groups = term == VisitTerm.Means ? visits : 1;
-        int times = term == VisitTerm.Line ? 1 : 0;
-        int measured = times + sample.CovariateCount + 1;
+        var columns = RandomInterceptColumns.Of(sample, term, frame);
+        int visits = sample.Visits, groups = columns.Groups, measured = columns.Measured;
         int packed = PackedSymmetric.Length(groups + measured);
-        Span<double> within = frame.Doubles(packed);
-        Span<double> between = frame.Doubles(packed * visits);
-        Span<double> centres = frame.Doubles(measured), levels = frame.Doubles(groups);
-        Span<int> bySize = frame.Integers(visits);
-        Span<double> means = frame.Doubles(sample.Subjects * measured);
-        Span<int> sizes = frame.Integers(sample.Subjects);
-        Span<int> places = frame.Integers(sample.Values.Length);
+        Span<double> within = frame.Doubles(packed), between = frame.Doubles(packed * visits);
+        Span<int> bySize = frame.Integers(visits), sizes = frame.Integers(sample.Subjects), places = frame.Integers(sample.Values.Length);
+        Span<double> means = frame.Doubles(sample.Subjects * measured), rows = frame.Doubles(visits * measured);
         within.Clear();
         between.Clear();
         bySize.Clear();
 
-        Origins(sample, times, centres);
-        double origin = centres[^1];
-        GroupMeans(sample, origin, levels, frame);
-        centres[^1] = 0;
-        Span<double> rows = frame.Doubles(visits * measured);
-        int observations = 0, subjects = 0, placed = 0;
-        double largest = 0;
+        int observations = 0, subjects = 0;
         for (int i = 0; i < sample.Subjects; i++)
         {
-            Span<int> present = places.Slice(placed, visits);
-            int size = Read(sample, i, times, centres, rows, present);
-            TakeLevels(rows[..(size * measured)], present[..size], origin, levels, ref largest);
+            Span<int> present = places.Slice(observations, visits);
+            int size = columns.Read(i, rows, present);
             sizes[i] = size;
-            placed += size;
             if (size == 0)
                 continue;
             subjects++;
@@ -90,107 +77,30 @@ internal readonly ref struct RandomInterceptMoments
             AddWithin(rows[..(size * measured)], present[..size], groups, measured, means.Slice(i * measured, measured), within);
         }
 
+        Span<double> centres = frame.Doubles(measured);
         Recentre(means, sizes, observations, centres);
-        foreach (ref double level in levels)
-            level += centres[^1];
         AddBetween(means, sizes, places, visits, groups, measured, between);
         SpreadComplete(bySize[visits - 1], groups, between[(packed * (visits - 1))..]);
         AddGroupsWithin(between, bySize, groups, packed, within);
+        foreach (ref double level in columns.Levels)
+            level += centres[^1] * columns.Scale;
+        for (int column = 0; column < measured - 1; column++)
+            centres[column] += columns.Origins[column];
         return new RandomInterceptMoments
         {
             Groups = groups,
             Parameters = groups + measured - 1,
             Subjects = subjects,
             Observations = observations,
-            LargestMagnitude = largest,
+            LargestMagnitude = columns.LargestMagnitude,
+            Scale = columns.Scale,
             Within = within,
             Between = between,
             SubjectsBySize = bySize,
             Centres = centres[..^1],
-            Origin = origin,
-            Levels = levels,
+            Origin = columns.Origins[^1],
+            Levels = columns.Levels,
         };
-    }
-
-    // The first observation is a good enough origin for a first step: what is left is of the size of the spread.
-    private static void Origins(in VisitSample sample, int times, Span<double> origins)
-    {
-        origins.Clear();
-        int covariates = sample.CovariateCount;
-        for (int at = 0; at < sample.Values.Length; at++)
-        {
-            if (!IsObserved(sample, at))
-                continue;
-            if (times == 1)
-                origins[0] = sample.Times[at % sample.Visits];
-            sample.Covariates.Slice(at * covariates, covariates).CopyTo(origins[times..]);
-            origins[^1] = sample.Values[at];
-            return;
-        }
-    }
-
-    private static void GroupMeans(in VisitSample sample, double origin, Span<double> levels, in Scratch.Frame frame)
-    {
-        Span<int> counts = frame.Integers(levels.Length);
-        counts.Clear();
-        levels.Clear();
-        for (int at = 0; at < sample.Values.Length; at++)
-        {
-            if (!IsObserved(sample, at))
-                continue;
-            int group = levels.Length > 1 ? at % sample.Visits : 0;
-            levels[group] += sample.Values[at] - origin;
-            counts[group]++;
-        }
-
-        for (int group = 0; group < levels.Length; group++)
-            levels[group] = counts[group] > 0 ? levels[group] / counts[group] : 0;
-    }
-
-    private static bool IsObserved(in VisitSample sample, int at)
-    {
-        if (double.IsNaN(sample.Values[at]))
-            return false;
-        int covariates = sample.CovariateCount;
-        for (int q = 0; q < covariates; q++)
-        {
-            if (double.IsNaN(sample.Covariates[at * covariates + q]))
-                return false;
-        }
-
-        return true;
-    }
-
-    private static int Read(
-        in VisitSample sample, int subject, int times, ReadOnlySpan<double> origins, Span<double> rows, Span<int> present)
-    {
-        int size = 0, to = 0, covariates = sample.CovariateCount, visits = sample.Visits;
-        for (int j = 0; j < visits; j++)
-        {
-            int at = subject * visits + j;
-            if (!IsObserved(sample, at))
-                continue;
-            present[size++] = j;
-            if (times == 1)
-                rows[to++] = sample.Times[j] - origins[0];
-            for (int q = 0; q < covariates; q++)
-                rows[to++] = sample.Covariates[at * covariates + q] - origins[times + q];
-            rows[to++] = sample.Values[at];
-        }
-
-        return size;
-    }
-
-    private static void TakeLevels(
-        Span<double> rows, ReadOnlySpan<int> present, double origin, ReadOnlySpan<double> levels, ref double largest)
-    {
-        int measured = rows.Length / Math.Max(1, present.Length);
-        for (int o = 0; o < present.Length; o++)
-        {
-            ref double value = ref rows[(o + 1) * measured - 1];
-            largest = Math.Max(largest, Math.Abs(value));
-            value = value - origin - levels[levels.Length > 1 ? present[o] : 0];
-        }
     }
 
     private static void AddWithin(
@@ -234,7 +144,7 @@ internal readonly ref struct RandomInterceptMoments
             double centre = sum / observations;
             for (int i = 0; i < sizes.Length; i++)
                 means[i * measured + column] -= centre;
-            centres[column] += centre;
+            centres[column] = centre;
         }
     }
 

@@ -1,4 +1,5 @@
 using MatchedSuite.Statistics.LinearAlgebra;
+using MatchedSuite.Statistics.Pairs;
 
 namespace MatchedSuite.Statistics.Visits;
 
@@ -46,11 +47,13 @@ public static class RepeatedMeasuresAnova
             meanSquares += mean[a] * mean[a];
         }
 
-        double rounding = StudentTest.RoundingOf(LargestMagnitude(complete.Values));
+        double rounding = StudentTest.RoundingOf(Math.Max(FixedLanes.Largest(complete.Values), -FixedLanes.Smallest(complete.Values)));
         if (trace <= contrasts * rounding * rounding)
             return Untested(Outcome.NoVariation, complete);
-        double squares = PackedSymmetric.TraceOfProduct(covariance, covariance, contrasts);
-        double epsilon = Math.Min(1, trace * trace / (contrasts * squares));
+        // Epsilon and W have no unit: with a trace of 1 no square over- or underflows.
+        foreach (ref double element in covariance)
+            element /= trace;
+        double epsilon = Math.Min(1, 1 / (contrasts * PackedSymmetric.TraceOfProduct(covariance, covariance, contrasts)));
         return new RepeatedMeasuresAnovaFit(
             Outcome.Tested, n, complete.Visits, n * meanSquares, SubjectSquares(complete), (n - 1) * trace,
             epsilon, HuynhFeldt(epsilon, n, contrasts), MauchlySphericity.Of(covariance, contrasts, n, scratch));
@@ -132,14 +135,6 @@ public static class RepeatedMeasuresAnova
         }
 
         return k * squares;
-    }
-
-    private static double LargestMagnitude(ReadOnlySpan<double> values)
-    {
-        double largest = 0;
-        foreach (double value in values)
-            largest = Math.Max(largest, Math.Abs(value));
-        return largest;
     }
 
     private static RepeatedMeasuresAnovaFit Untested(Outcome outcome, in VisitSample complete) =>

@@ -31,7 +31,7 @@ internal static class RestrictedLikelihood
         if (withinDegrees < 1 || betweenDegrees < 1)
             return MixedModelFit.Untested(Outcome.TooFewSets, moments.Subjects, moments.Observations);
         // Rounding is left by the values themselves, and by taking from their squares what covariates explain.
-        double rounding = StudentTest.RoundingOf(moments.LargestMagnitude);
+        double rounding = StudentTest.RoundingOf(moments.LargestMagnitude) / moments.Scale;
         double explained = StudentTest.RoundingOf(moments.Within[^1]);
         if (within <= withinDegrees * rounding * rounding + explained)
             return MixedModelFit.Untested(Outcome.NoVariation, moments.Subjects, moments.Observations);
@@ -42,7 +42,7 @@ internal static class RestrictedLikelihood
         RandomInterceptOptimum.Find(ref profile, moments.Observations, moments.Subjects, within, withinDegrees, betweenDegrees);
         return Describe(sample, term, moments, profile, frame) with
         {
-            WithinSquares = within,
+            ScaledWithinSquares = within,
             WithinDegrees = withinDegrees,
             BetweenDegrees = betweenDegrees,
         };
@@ -92,7 +92,7 @@ internal static class RestrictedLikelihood
         for (int i = 0; i < parameters; i++)
         {
             bool isLevel = i < moments.Groups;
-            relative[i] = (isLevel ? moments.Levels[i] : 0) - profile.Residual[i];
+            relative[i] = (isLevel ? moments.Levels[i] : 0) - moments.Scale * profile.Residual[i];
             coefficients[i] = (isLevel ? moments.Origin : 0) + relative[i];
         }
 
@@ -111,10 +111,9 @@ internal static class RestrictedLikelihood
             Coefficients = coefficients,
             Relative = relative,
             ColumnMeans = moments.Centres,
-            VarianceWithin = within,
-            VarianceBetween = ratio * within,
+            ScaledWithin = within,
             VarianceRatio = ratio,
-            RestrictedLogLikelihood = -0.5 * (free * (Math.Log(2 * Math.PI * within) + 1) + profile.LogDeterminants),
+            RestrictedLogLikelihood = -0.5 * (free * (Math.Log(2 * Math.PI * within) + 1) + profile.LogDeterminants) - free * Math.Log(moments.Scale),
             Score = ratio * profile.Score,
             Moments = moments,
             Inverse = profile.Inverse,

@@ -9,7 +9,7 @@ namespace MatchedSuite.Statistics.Visits;
 /// subjects is at its bound 0 only σ² is uncertain, and they are N − p.
 /// Source: Satterthwaite (1946), Biometrics Bulletin 2, 110-114; Giesbrecht &amp; Burns (1985), Biometrics 41, 477-486.
 /// </remarks>
-/// <param name="Variance">Estimated variance of the combination.</param>
+/// <param name="Variance">Estimated variance of the combination, in squared units of the moments' scale.</param>
 /// <param name="DegreesOfFreedom">Degrees of freedom, positive.</param>
 internal readonly record struct SatterthwaiteContrast(double Variance, double DegreesOfFreedom)
 {
@@ -24,8 +24,8 @@ internal readonly record struct SatterthwaiteContrast(double Variance, double De
         double unit = 0;
         for (int i = 0; i < order; i++)
             unit += weights[i] * turned[i];
-        double variance = fit.VarianceWithin * unit;
-        double byRatio = -fit.VarianceWithin * PackedSymmetric.QuadraticForm(fit.CrossProductsSlope, turned, order);
+        double variance = fit.ScaledWithin * unit;
+        double byRatio = -fit.ScaledWithin * PackedSymmetric.QuadraticForm(fit.CrossProductsSlope, turned, order);
         double spread = unit * unit * fit.VarianceOfWithin
             + 2 * unit * byRatio * fit.CovarianceOfBoth
             + byRatio * byRatio * fit.VarianceOfRatio;

@@ -43,7 +43,7 @@ public static class VarianceRatioInterval
     // RSS is convex and falls, so Newton's steps from 0 never pass the root.
     private static double Solve(ref RandomInterceptProfile profile, in MixedModelFit fit, double quantile)
     {
-        double target = fit.WithinSquares * (1 + quantile * fit.BetweenDegrees / fit.WithinDegrees);
+        double target = fit.ScaledWithinSquares * (1 + quantile * fit.BetweenDegrees / fit.WithinDegrees);
         double ratio = 0;
         for (int step = 0; step < MostSteps; step++)
         {
