@@ -13,14 +13,28 @@ internal static class HelmertContrasts
         weights[contrast + 1] = (contrast + 1) * unit;
     }
 
-    /// <summary>All contrasts of one subject's visits; a level common to the visits leaves no trace, however large.</summary>
-    public static void Apply(ReadOnlySpan<double> visits, Span<double> contrasts)
+    /// <summary>All contrasts of each of many subjects; a level common to a subject's visits leaves no trace, however large.</summary>
+    /// <param name="values">Subjects × k values, complete.</param>
+    /// <param name="visits">k.</param>
+    /// <param name="contrasts">Room for subjects × (k − 1) numbers.</param>
+    /// <param name="frame">Working memory.</param>
+    public static void Apply(ReadOnlySpan<double> values, int visits, Span<double> contrasts, in Scratch.Frame frame)
     {
-        double origin = visits[0], sum = 0;
-        for (int a = 0; a < contrasts.Length; a++)
+        Span<double> shares = frame.Doubles(visits - 1), units = frame.Doubles(visits - 1);
+        for (int a = 0; a < visits - 1; a++)
         {
-            sum += visits[a] - origin;
-            contrasts[a] = (visits[a + 1] - origin - sum / (a + 1)) * Math.Sqrt((a + 1.0) / (a + 2.0));
+            shares[a] = 1 / (a + 1.0);
+            units[a] = Math.Sqrt((a + 1.0) / (a + 2.0));
+        }
+
+        for (int start = 0, to = 0; start < values.Length; start += visits)
+        {
+            double origin = values[start], sum = 0;
+            for (int a = 0; a < units.Length; a++)
+            {
+                contrasts[to++] = (values[start + a + 1] - origin - sum * shares[a]) * units[a];
+                sum += values[start + a + 1] - origin;
+            }
         }
     }
 }

@@ -47,11 +47,10 @@ public static class MixedModel
         if (weights.Length > fit.Coefficients.Length || weights.IndexOfAnyExcept(0.0) < 0)
             throw new ArgumentException($"A contrast takes 1 to {fit.Coefficients.Length} weights, one of them not 0.", nameof(weights));
         using var frame = scratch.Open();
-        Span<double> all = frame.Doubles(fit.Coefficients.Length);
-        all.Clear();
-        weights.CopyTo(all);
-        double estimate = fit.Combine(weights), scale = fit.Moments.Scale;
-        var contrast = SatterthwaiteContrast.Of(fit, all, frame.Doubles(all.Length));
+        Span<double> coded = frame.Doubles(fit.Coefficients.Length);
+        fit.Encode(weights, coded);
+        double estimate = fit.Estimate(coded), scale = fit.Moments.Scale;
+        var contrast = SatterthwaiteContrast.Of(fit, coded, frame.Doubles(coded.Length));
         return StudentTest.Of(estimate, scale * Math.Sqrt(contrast.Variance), contrast.DegreesOfFreedom, options) with
         {
             Sets = fit.Subjects,
@@ -98,7 +97,7 @@ public static class MixedModel
         using var frame = scratch.Open();
         int count = fit.Coefficients.Length, contrasts = fit.Term == VisitTerm.Line ? 1 : fit.Times.Length - 1;
         Span<double> rows = frame.Doubles(contrasts * count), turned = frame.Doubles(count);
-        ContrastRows(fit, contrasts, rows);
+        ContrastRows(fit, contrasts, rows, turned);
         Span<double> covariance = frame.Doubles(PackedSymmetric.Length(contrasts)), vectors = frame.Doubles(contrasts * contrasts);
         for (int a = 0; a < contrasts; a++)
         {
@@ -114,7 +113,7 @@ public static class MixedModel
         {
             Combine(rows, vectors.Slice(a * contrasts, contrasts), count, weights);
             var one = SatterthwaiteContrast.Of(fit, weights, turned);
-            double estimate = fit.Combine(weights) / fit.Moments.Scale;
+            double estimate = fit.Estimate(weights) / fit.Moments.Scale;
             f += estimate * estimate / one.Variance;
             df = one.DegreesOfFreedom;
             smallest = Math.Min(smallest, df);
@@ -143,18 +142,18 @@ public static class MixedModel
             throw new ArgumentException("A difference of two visits needs a fit with one mean a visit.", nameof(fit));
     }
 
-    private static void ContrastRows(in MixedModelFit fit, int contrasts, Span<double> rows)
+    private static void ContrastRows(in MixedModelFit fit, int contrasts, Span<double> rows, Span<double> natural)
     {
         int count = fit.Coefficients.Length;
-        rows.Clear();
-        if (fit.Term == VisitTerm.Line)
-        {
-            rows[1] = 1;
-            return;
-        }
-
         for (int a = 0; a < contrasts; a++)
-            HelmertContrasts.Fill(a, rows.Slice(a * count, count));
+        {
+            natural.Clear();
+            if (fit.Term == VisitTerm.Line)
+                natural[1] = 1;
+            else
+                HelmertContrasts.Fill(a, natural);
+            fit.Encode(natural, rows.Slice(a * count, count));
+        }
     }
 
     private static void Combine(ReadOnlySpan<double> rows, ReadOnlySpan<double> shares, int count, Span<double> weights)

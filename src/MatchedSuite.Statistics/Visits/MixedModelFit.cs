@@ -57,7 +57,7 @@ public readonly ref struct MixedModelFit
     /// <summary>Degrees of freedom between subjects beside the fixed effects.</summary>
     public int BetweenDegrees { get; internal init; }
 
-    // Coefficients with the endpoint's origin taken off the levels: contrasts of them lose nothing to a common level.
+    // Coefficients of the coded columns, the endpoint's origin taken off the first: contrasts lose nothing to a common level.
     internal ReadOnlySpan<double> Relative { get; init; }
 
     internal RandomInterceptMoments Moments { get; init; }
@@ -79,28 +79,46 @@ public readonly ref struct MixedModelFit
     internal double CovarianceOfBoth { get; init; }
 
     /// <summary>Covariance of two fixed effects, by their places in <see cref="Coefficients"/>.</summary>
-    public double Covariance(int first, int second) => VarianceWithin * Inverse[PackedSymmetric.At(first, second)];
+    public double Covariance(int first, int second) => Moments.Scale * Moments.Scale * ScaledWithin * Unscaled(first, second);
 
     /// <summary>Standard error of a fixed effect.</summary>
-    public double StandardError(int place) => Moments.Scale * Math.Sqrt(ScaledWithin * Inverse[PackedSymmetric.At(place, place)]);
+    public double StandardError(int place) => Moments.Scale * Math.Sqrt(ScaledWithin * Unscaled(place, place));
 
-    // A sum of weights this small beside their sizes is 0 but for rounding, and the origin drops out.
+    // A sum of weights this small beside their sizes is 0 but for rounding, and the common level drops out.
     private const double NoLevel = 1e-14;
 
-    /// <summary>Σ weights · coefficients over the leading coefficients.</summary>
-    internal double Combine(ReadOnlySpan<double> weights)
+    /// <summary>Turns weights of the leading <see cref="Coefficients"/> into those of the coded columns: constant, indicators, measured.</summary>
+    internal void Encode(ReadOnlySpan<double> weights, Span<double> coded)
     {
-        double sum = 0, level = 0, sizes = 0;
-        for (int i = 0; i < weights.Length; i++)
+        coded.Clear();
+        weights.CopyTo(coded);
+        double level = 0, sizes = 0;
+        for (int i = 0; i < Math.Min(weights.Length, Moments.Groups); i++)
         {
-            sum += weights[i] * Relative[i];
-            if (i >= Moments.Groups)
-                continue;
             level += weights[i];
             sizes += Math.Abs(weights[i]);
         }
 
-        return Math.Abs(level) <= NoLevel * sizes ? sum : sum + level * Moments.Origin;
+        coded[0] = Math.Abs(level) <= NoLevel * sizes ? 0 : level;
+    }
+
+    /// <summary>Σ weights · coefficients of the coded columns.</summary>
+    internal double Estimate(ReadOnlySpan<double> coded)
+    {
+        double sum = 0;
+        for (int i = 0; i < coded.Length; i++)
+            sum += coded[i] * Relative[i];
+        return sum + coded[0] * Moments.Origin;
+    }
+
+    // A level is the constant's coefficient plus, but for the first, its indicator's.
+    private double Unscaled(int first, int second)
+    {
+        bool isSumFirst = first > 0 && first < Moments.Groups, isSumSecond = second > 0 && second < Moments.Groups;
+        return Inverse[PackedSymmetric.At(first, second)]
+            + (isSumFirst ? Inverse[PackedSymmetric.At(0, second)] : 0)
+            + (isSumSecond ? Inverse[PackedSymmetric.At(first, 0)] : 0)
+            + (isSumFirst && isSumSecond ? Inverse[0] : 0);
     }
 
     internal static MixedModelFit Untested(Outcome outcome, int subjects, int observations) => new()

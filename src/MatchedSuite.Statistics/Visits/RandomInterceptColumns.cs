@@ -3,9 +3,9 @@ namespace MatchedSuite.Statistics.Visits;
 /// <summary>The rows of a random-intercept model's design, read subject by subject, with what is large and common taken off first.</summary>
 /// <remarks>
 /// <para>Group columns: one indicator a visit, or the constant. Measured columns: time of a line, covariates, last the
-/// endpoint. Measured columns come less their value in the first observation; the endpoint also less the mean of its group,
-/// and over a power of two that makes its spread about 1: so what a common level or the visits explain costs no digit, and no
-/// square over- or underflows.</para>
+/// endpoint. Measured columns come less their value in the first observation; the endpoint less the subject's own first value
+/// (given apart) and less the differences between the means of the groups, over a power of two that makes its spread about
+/// 1: so what a level, the subjects or the visits explain costs no digit, and no square over- or underflows.</para>
 /// </remarks>
 internal readonly ref struct RandomInterceptColumns
 {
@@ -20,7 +20,11 @@ internal readonly ref struct RandomInterceptColumns
         _origins = origins;
         Levels = levels;
         FindOrigins();
-        (LargestMagnitude, double spread) = FindLevels(frame.Integers(levels.Length));
+        Span<int> counts = frame.Integers(levels.Length);
+        (LargestMagnitude, double spread) = FindLevels(counts);
+        FewestInGroup = counts[0];
+        foreach (int count in counts)
+            FewestInGroup = Math.Min(FewestInGroup, count);
         Scale = spread > 0 ? Math.ScaleB(1, Math.ILogB(spread)) : 1;
     }
 
@@ -33,11 +37,14 @@ internal readonly ref struct RandomInterceptColumns
     /// <summary>What was taken off the measured columns; the endpoint's, in its own unit, comes last.</summary>
     public ReadOnlySpan<double> Origins => _origins;
 
-    /// <summary>What was taken off the endpoint in each group beside its origin, in its own unit.</summary>
+    /// <summary>Mean of the first group beside the origin, then what the means of the other groups are above it; in the endpoint's unit.</summary>
     public Span<double> Levels { get; }
 
     /// <summary>Endpoint units that are 1 in the rows; a power of two.</summary>
     public double Scale { get; }
+
+    /// <summary>Observations of the group that has the fewest.</summary>
+    public int FewestInGroup { get; }
 
     /// <summary>The largest absolute value of the endpoint, for judging what is rounding.</summary>
     public double LargestMagnitude { get; }
@@ -53,23 +60,28 @@ internal readonly ref struct RandomInterceptColumns
     /// <param name="subject">Place of the subject.</param>
     /// <param name="rows">Room for the measured columns of every visit; filled row after row.</param>
     /// <param name="present">Room for every visit; filled with the visits observed.</param>
+    /// <param name="level">What the subject's first value is above origin and level, in units of <see cref="Scale"/>.</param>
     /// <returns>Number of observations.</returns>
-    public int Read(int subject, Span<double> rows, Span<int> present)
+    public int Read(int subject, Span<double> rows, Span<int> present, out double level)
     {
         int size = 0, to = 0, covariates = _sample.CovariateCount, visits = _sample.Visits;
+        double first = double.NaN;
         for (int j = 0; j < visits; j++)
         {
             int at = subject * visits + j;
             if (!IsObserved(at))
                 continue;
             present[size++] = j;
+            if (size == 1)
+                first = _sample.Values[at];
             if (_times == 1)
                 rows[to++] = _sample.Times[j] - _origins[0];
             for (int q = 0; q < covariates; q++)
                 rows[to++] = _sample.Covariates[at * covariates + q] - _origins[_times + q];
-            rows[to++] = (_sample.Values[at] - _origins[^1] - Levels[GroupOf(j)]) / Scale;
+            rows[to++] = (_sample.Values[at] - first - (Levels.Length > 1 && j > 0 ? Levels[j] : 0)) / Scale;
         }
 
+        level = (first - _origins[^1] - Levels[0]) / Scale;
         return size;
     }
 
@@ -123,7 +135,12 @@ internal readonly ref struct RandomInterceptColumns
         }
 
         for (int group = 0; group < counts.Length; group++)
+        {
             Levels[group] = counts[group] > 0 ? Levels[group] / counts[group] : 0;
+            if (group > 0)
+                Levels[group] -= Levels[0];
+        }
+
         return (largest, spread);
     }
 }

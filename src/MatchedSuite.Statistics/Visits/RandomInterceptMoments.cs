@@ -4,18 +4,23 @@ namespace MatchedSuite.Statistics.Visits;
 
 /// <summary>Everything the likelihood of a random-intercept model needs to know of one endpoint.</summary>
 /// <remarks>
-/// <para>Columns as <see cref="RandomInterceptColumns"/> gives them; order = parameters + 1, the endpoint last. Cross-products are
-/// split into those within subjects and, by the number m of observations a subject has, those of the subjects' sums. With
-/// the variance ratio λ the weighted cross-products are W + Σ S_m / (m(1 + λm)): only positive parts, so nothing cancels.</para>
+/// <para>Columns: the constant, an indicator of each visit but the first (none for a line), the measured columns of
+/// <see cref="RandomInterceptColumns"/>, the endpoint last; order = parameters + 1. Cross-products are split into those
+/// within subjects and, by the number m of observations a subject has, those of the subjects' sums. With the variance ratio
+/// λ the weighted cross-products are W + Σ S_m / (m(1 + λm)): only positive parts, so nothing cancels, and the constant, which
+/// does not vary within subjects, has exact zeros in W, so that a large λ does no harm either.</para>
 /// <para>The endpoint is in units of <see cref="Scale"/>.</para>
 /// </remarks>
 internal readonly ref struct RandomInterceptMoments
 {
-    /// <summary>Indicator columns.</summary>
+    /// <summary>Levels that the model has: visits, or 1 for a line. The constant and the indicators are as many columns.</summary>
     public int Groups { get; private init; }
 
     /// <summary>Fixed effects: group columns and measured columns without the endpoint.</summary>
     public int Parameters { get; private init; }
+
+    /// <summary>Observations of the group that has the fewest.</summary>
+    public int FewestInGroup { get; private init; }
 
     /// <summary>Subjects with at least one observation.</summary>
     public int Subjects { get; private init; }
@@ -47,7 +52,7 @@ internal readonly ref struct RandomInterceptMoments
     /// <summary>What was taken off every value of the endpoint, in its own unit.</summary>
     public double Origin { get; private init; }
 
-    /// <summary>What was taken off the endpoint beside <see cref="Origin"/>, group by group, in its own unit.</summary>
+    /// <summary>What was taken off the endpoint beside <see cref="Origin"/>: of all groups, then more of each further one; in its own unit.</summary>
     public ReadOnlySpan<double> Levels { get; private init; }
 
     /// <summary>Gathers the moments of a sample.</summary>
@@ -67,14 +72,16 @@ internal readonly ref struct RandomInterceptMoments
         for (int i = 0; i < sample.Subjects; i++)
         {
             Span<int> present = places.Slice(observations, visits);
-            int size = columns.Read(i, rows, present);
+            int size = columns.Read(i, rows, present, out double level);
             sizes[i] = size;
             if (size == 0)
                 continue;
             subjects++;
             observations += size;
             bySize[size - 1]++;
-            AddWithin(rows[..(size * measured)], present[..size], groups, measured, means.Slice(i * measured, measured), within);
+            var mean = means.Slice(i * measured, measured);
+            AddWithin(rows[..(size * measured)], present[..size], groups, measured, mean, within);
+            mean[^1] += level;
         }
 
         Span<double> centres = frame.Doubles(measured);
@@ -82,14 +89,16 @@ internal readonly ref struct RandomInterceptMoments
         AddBetween(means, sizes, places, visits, groups, measured, between);
         SpreadComplete(bySize[visits - 1], groups, between[(packed * (visits - 1))..]);
         AddGroupsWithin(between, bySize, groups, packed, within);
-        foreach (ref double level in columns.Levels)
-            level += centres[^1] * columns.Scale;
+        if (groups > 1)
+            PutConstantFirst(between, within, groups, frame.Doubles(groups + measured));
+        columns.Levels[0] += centres[^1] * columns.Scale;
         for (int column = 0; column < measured - 1; column++)
             centres[column] += columns.Origins[column];
         return new RandomInterceptMoments
         {
             Groups = groups,
             Parameters = groups + measured - 1,
+            FewestInGroup = columns.FewestInGroup,
             Subjects = subjects,
             Observations = observations,
             LargestMagnitude = columns.LargestMagnitude,
@@ -225,5 +234,30 @@ internal readonly ref struct RandomInterceptMoments
                 within[start + row] += slice[start + row] - slice[start + row] / size;
             }
         }
+    }
+
+    // The indicators add up to the constant: it takes the place of the first.
+    private static void PutConstantFirst(Span<double> between, Span<double> within, int groups, Span<double> sums)
+    {
+        for (int start = 0; start < between.Length; start += within.Length)
+        {
+            var slice = between.Slice(start, within.Length);
+            for (int row = 0; row < sums.Length; row++)
+            {
+                sums[row] = 0;
+                for (int group = 0; group < groups; group++)
+                    sums[row] += slice[PackedSymmetric.At(row, group)];
+            }
+
+            double all = 0;
+            for (int group = 0; group < groups; group++)
+                all += sums[group];
+            for (int row = 1; row < sums.Length; row++)
+                slice[PackedSymmetric.At(row, 0)] = sums[row];
+            slice[0] = all;
+        }
+
+        for (int row = 0; row < sums.Length; row++)
+            within[PackedSymmetric.At(row, 0)] = 0;
     }
 }

@@ -37,8 +37,7 @@ public static class RepeatedMeasuresAnova
 
         Span<double> rows = frame.Doubles(n * contrasts), mean = frame.Doubles(contrasts);
         Span<double> covariance = frame.Doubles(PackedSymmetric.Length(contrasts));
-        for (int i = 0; i < n; i++)
-            HelmertContrasts.Apply(complete.Subject(i), rows.Slice(i * contrasts, contrasts));
+        HelmertContrasts.Apply(complete.Values, complete.Visits, rows, frame);
         Covariance(rows, contrasts, mean, covariance);
         double trace = 0, meanSquares = 0;
         for (int a = 0; a < contrasts; a++)

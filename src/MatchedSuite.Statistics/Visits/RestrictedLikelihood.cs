@@ -13,7 +13,7 @@ internal static class RestrictedLikelihood
     {
         var moments = RandomInterceptMoments.Of(sample, term, frame);
         int parameters = moments.Parameters, order = parameters + 1, packed = PackedSymmetric.Length(order);
-        if (moments.Subjects < 2 || moments.Observations <= parameters || !EveryGroupSeen(moments))
+        if (moments.Subjects < 2 || moments.Observations <= parameters || moments.FewestInGroup == 0)
             return MixedModelFit.Untested(Outcome.TooFewSets, moments.Subjects, moments.Observations);
 
         Span<double> total = frame.Doubles(packed), factor = frame.Doubles(packed), smallestPivots = frame.Doubles(order);
@@ -48,20 +48,6 @@ internal static class RestrictedLikelihood
         };
     }
 
-    private static bool EveryGroupSeen(in RandomInterceptMoments moments)
-    {
-        for (int group = 0; group < moments.Groups; group++)
-        {
-            double seen = moments.Within[PackedSymmetric.At(group, group)];
-            for (int size = 0; size < moments.SubjectsBySize.Length; size++)
-                seen += moments.BetweenOf(size + 1)[PackedSymmetric.At(group, group)];
-            if (seen == 0)
-                return false;
-        }
-
-        return true;
-    }
-
     // Cross-products of all observations, as if there were no subjects.
     private static void Total(in RandomInterceptMoments moments, Span<double> total)
     {
@@ -91,9 +77,9 @@ internal static class RestrictedLikelihood
         Span<double> relative = frame.Doubles(parameters), coefficients = frame.Doubles(parameters);
         for (int i = 0; i < parameters; i++)
         {
-            bool isLevel = i < moments.Groups;
-            relative[i] = (isLevel ? moments.Levels[i] : 0) - moments.Scale * profile.Residual[i];
-            coefficients[i] = (isLevel ? moments.Origin : 0) + relative[i];
+            relative[i] = (i < moments.Groups ? moments.Levels[i] : 0) - moments.Scale * profile.Residual[i];
+            bool isLevel = i > 0 && i < moments.Groups;
+            coefficients[i] = relative[i] + (isLevel ? coefficients[0] : i == 0 ? moments.Origin : 0);
         }
 
         // Observed information of −2·log-likelihood in (σ², λ); at the bound λ is no free parameter.

@@ -15,7 +15,7 @@ internal readonly record struct SatterthwaiteContrast(double Variance, double De
 {
     /// <summary>Works the combination out.</summary>
     /// <param name="fit">A tested fit.</param>
-    /// <param name="weights">One weight a fixed effect.</param>
+    /// <param name="weights">One weight a coded column of the fit.</param>
     /// <param name="turned">Room for as many numbers.</param>
     public static SatterthwaiteContrast Of(in MixedModelFit fit, ReadOnlySpan<double> weights, Span<double> turned)
     {

@@ -71,6 +71,39 @@ public class MixedModelTests
     }
 
     [Fact]
+    public void Subjects_a_million_times_further_apart_than_their_visits_still_give_the_closed_form()
+    {
+        double[] values = [.. Enumerable.Range(0, 30).Select(at => Math.Pow(at / 3 + 1, 6) * 8 + (at * at % 7) / 8.0)];
+        var scratch = new Scratch();
+        using var frame = scratch.Open();
+        var fit = MixedModel.Fit(VisitSample.Of(values, [0, 1, 2]), VisitTerm.Means, frame);
+        var anova = RepeatedMeasuresAnova.Fit(VisitSample.Of(values, [0, 1, 2]), scratch);
+        var omnibus = MixedModel.Omnibus(fit, Options, scratch);
+        Assert.True(fit.VarianceRatio > 1e12);
+        Close.To(anova.F, omnibus.Statistic, 1e-9);
+        Close.To(anova.ErrorDegrees, omnibus.DenominatorDegreesOfFreedom, 1e-9);
+    }
+
+    [Fact]
+    public void Covariances_of_coefficients_are_those_of_their_contrasts() =>
+        VisitTable.Gappy(6, 12, 3, 4).Sample(table =>
+        {
+            var scratch = new Scratch();
+            using var frame = scratch.Open();
+            var fit = MixedModel.Fit(table.Sample(), VisitTerm.Means, frame);
+            if (fit.Outcome != Outcome.Tested)
+                return;
+            var difference = MixedModel.Difference(fit, 2, 1, Options, scratch);
+            Close.To(difference.Estimate, fit.Coefficients[2] - fit.Coefficients[1], 1e-10, 1e-12);
+            double variance = fit.Covariance(1, 1) + fit.Covariance(2, 2) - 2 * fit.Covariance(2, 1);
+            Close.To(difference.StandardError, Math.Sqrt(variance), 1e-9);
+            var level = MixedModel.Contrast(fit, [0, 1], Options, scratch);
+            Close.To(level.StandardError, fit.StandardError(1), 1e-11);
+            Close.To(level.Estimate, fit.Coefficients[1], 1e-12, 1e-14);
+            Close.To(MixedModel.Contrast(fit, [1], Options, scratch).StandardError, fit.StandardError(0), 1e-11);
+        }, iter: 200);
+
+    [Fact]
     public void The_order_of_subjects_and_visits_changes_nothing() =>
         VisitTable.Gappy(6, 12, 3, 4).Sample(table =>
         {
