@@ -11,10 +11,10 @@ public class ArmMethodsTests
 
     private static readonly Gen<Trial> Continuous =
         from n in Gen.Int[6, 20]
-        from baseline in Gen.Double[40, 60].Array[n]
-        from change in Gen.Double[-3, 5].Array[n]
+        from baseline in Gen.Int[40_000, 60_000].Array[n]
+        from change in Gen.Int[-3000, 5000].Array[n]
         from arms in Gen.Bool.Array[n]
-        select Trial.Of(baseline, change, arms);
+        select Trial.Of([.. baseline.Select(value => value / 1024.0)], [.. change.Select(value => value / 1024.0)], arms);
 
     private static readonly Gen<Trial> Coarse =
         from n in Gen.Int[6, 40]

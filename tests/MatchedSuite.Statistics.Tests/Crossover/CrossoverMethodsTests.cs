@@ -11,9 +11,9 @@ public class CrossoverMethodsTests
 
     private static readonly Gen<Trial> Trials =
         from n in Gen.Int[6, 16]
-        from first in Gen.Double[5, 9].Array[n]
-        from second in Gen.Double[5, 9].Array[n]
-        select new Trial(first, second, Alternate(n));
+        from first in Gen.Int[5000, 9000].Array[n]
+        from second in Gen.Int[5000, 9000].Array[n]
+        select new Trial([.. first.Select(x => x / 1024.0)], [.. second.Select(x => x / 1024.0)], Alternate(n));
 
     private static readonly Gen<Trial> Signs =
         from n in Gen.Int[6, 24]
@@ -38,8 +38,9 @@ public class CrossoverMethodsTests
 
     [Fact]
     public void A_level_a_period_effect_and_a_treatment_effect_go_where_they_belong() =>
-        Gen.Select(Trials, Gen.Double[-3, 3], Gen.Double[-3, 3]).Sample((trial, period, treatment) =>
+        Gen.Select(Trials, Gen.Int[-3000, 3000], Gen.Int[-3000, 3000]).Sample((trial, periods, treatments) =>
         {
+            double period = periods / 1024.0, treatment = treatments / 1024.0;
             var changed = trial.With(period, treatment);
             Close.To(trial.Run(CrossoverT.Run, Sides.Two).Estimate + treatment, changed.Run(CrossoverT.Run, Sides.Two).Estimate, 1e-11, 1e-12);
             Close.To(trial.Run(CrossoverT.Period, Sides.Two).Estimate + period, changed.Run(CrossoverT.Period, Sides.Two).Estimate, 1e-11, 1e-12);

@@ -86,8 +86,8 @@ public class RestrictedLikelihoodTests
 
     private static Gen<(VisitTable Table, double[] Covariate)> Cases { get; } =
         from table in VisitTable.Gappy(6, 10, 2, 4)
-        from covariate in Gen.Double[10, 20].Array[table.Values.Length]
-        select (table, covariate);
+        from covariate in Gen.Int[10000, 20000].Array[table.Values.Length]
+        select (table, covariate.Select(value => value / 1000.0).ToArray());
 
     private static double Normal(Random random) =>
         Math.Sqrt(-2 * Math.Log(1 - random.NextDouble())) * Math.Cos(2 * Math.PI * random.NextDouble());

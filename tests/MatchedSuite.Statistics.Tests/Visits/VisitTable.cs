@@ -8,13 +8,13 @@ internal sealed record VisitTable(int Visits, double[] Values)
 {
     public int Subjects => Values.Length / Visits;
 
-    /// <summary>Complete tables of continuous values around subject levels.</summary>
+    /// <summary>Complete tables of finely graded values around subject levels; eighths and 1024ths, so that laws of scale hold to the bit.</summary>
     public static Gen<VisitTable> Complete(int fewestSubjects, int mostSubjects, int fewestVisits, int mostVisits) =>
         from visits in Gen.Int[fewestVisits, mostVisits]
         from subjects in Gen.Int[fewestSubjects, mostSubjects]
-        from levels in Gen.Double[-3, 3].Array[subjects]
-        from noise in Gen.Double[-1, 1].Array[subjects * visits]
-        select new VisitTable(visits, [.. noise.Select((value, at) => levels[at / visits] + value + 0.3 * (at % visits))]);
+        from levels in Gen.Int[-24, 24].Array[subjects]
+        from noise in Gen.Int[-1024, 1024].Array[subjects * visits]
+        select new VisitTable(visits, [.. noise.Select((value, at) => levels[at / visits] / 8.0 + value / 1024.0 + 0.25 * (at % visits))]);
 
     /// <summary>Complete tables of few distinct values: many ties.</summary>
     public static Gen<VisitTable> Coarse(int fewestSubjects, int mostSubjects, int fewestVisits, int mostVisits) =>
