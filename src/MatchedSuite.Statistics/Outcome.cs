@@ -25,4 +25,7 @@ public enum Outcome
 
     /// <summary>The likelihood could not be maximised to the accuracy that is promised.</summary>
     NotConverged,
+
+    /// <summary>Fewer endpoints than the method needs to learn what they have in common.</summary>
+    TooFewEndpoints,
 }

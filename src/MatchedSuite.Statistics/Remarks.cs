@@ -52,11 +52,21 @@ public enum Remarks : long
     /// <summary>The likelihood could not be maximised to the accuracy that is promised; no test was made.</summary>
     NotConverged = 1 << 14,
 
-    /// <summary>The null distribution was sampled by random relabelings.</summary>
+    /// <summary>The null distribution was sampled by random relabelings or sign flips.</summary>
     Resampled = 1 << 15,
 
     /// <summary>The method does not adjust for covariates; the result is unadjusted although covariates were given.</summary>
     Unadjusted = 1 << 16,
+
     /// <summary>The variance between subjects is estimated as 0, the end of its range; the subjects' values are then as good as independent.</summary>
     SingularFit = 1 << 17,
+
+    /// <summary>The method has no direction; its p-value is two-sided whatever was asked for.</summary>
+    TwoSidedOnly = 1 << 18,
+
+    /// <summary>A limit is infinite because one role has no events.</summary>
+    EventsInOneRole = 1 << 19,
+
+    /// <summary>Fewer endpoints than the fit of the common variance needs; no test was made.</summary>
+    TooFewEndpoints = 1 << 20,
 }

@@ -54,6 +54,7 @@ public readonly record struct TestResult()
         Outcome.TooManyMissing => Remarks.TooManyMissing,
         Outcome.Collinear => Remarks.Collinear,
         Outcome.NotConverged => Remarks.NotConverged,
+        Outcome.TooFewEndpoints => Remarks.TooFewEndpoints,
         _ => Remarks.None,
     };
 }

@@ -157,7 +157,7 @@ public class PairedDifferencesTests
     private static Probability NormalP(in PairSample pairs, Scratch scratch, Sides sides)
     {
         var ranks = Ranks(pairs, scratch);
-        var (lower, upper) = SignedRankNormal.Tails(ranks.Sum, ranks.Ranked, ranks.TieTerm);
+        var (lower, upper) = SignedRankNormal.Tails(ranks.Sum, ranks.Ranked, 0, ranks.TieTerm);
         return Tails.ForSides(sides, lower, upper);
     }
 

@@ -2,7 +2,7 @@ namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>Exact tails of a signed-rank sum given the observed midranks, ties included.</summary>
 /// <remarks>
-/// All 2ᵐ sign assignments of the m midranks are equally likely. Sums are counted in half ranks, so they are integers. Only
+/// All 2ᵐ sign assignments of the m midranks are equally likely. Sums are counted in half ranks where there are midranks, so they are integers. Only
 /// sums up to the smaller of the two rank sums are followed: no tail needs more. Time O(m · smaller sum).
 /// </remarks>
 internal static class ConditionalRankSum

@@ -43,6 +43,30 @@ internal static class FixedLanes
         return (deviationSum, squareSum);
     }
 
+    /// <summary>Sum of the products of two equally long columns.</summary>
+    public static double Dot(ReadOnlySpan<double> left, ReadOnlySpan<double> right)
+    {
+        var lanes = Vector256<double>.Zero;
+        int i = 0;
+        for (; i <= left.Length - Vector256<double>.Count; i += Vector256<double>.Count)
+            lanes += Vector256.Create(left[i..]) * Vector256.Create(right[i..]);
+        double sum = Fold(lanes);
+        for (; i < left.Length; i++)
+            sum += left[i] * right[i];
+        return sum;
+    }
+
+    /// <summary>Takes <paramref name="factor"/> times <paramref name="other"/> from <paramref name="values"/>, place by place.</summary>
+    public static void Subtract(Span<double> values, double factor, ReadOnlySpan<double> other)
+    {
+        var factors = Vector256.Create(factor);
+        int i = 0;
+        for (; i <= values.Length - Vector256<double>.Count; i += Vector256<double>.Count)
+            (Vector256.Create<double>(values[i..]) - (factors * Vector256.Create(other[i..]))).CopyTo(values[i..]);
+        for (; i < values.Length; i++)
+            values[i] -= factor * other[i];
+    }
+
     /// <summary>Largest of at least one finite value.</summary>
     public static double Largest(ReadOnlySpan<double> values)
     {

@@ -6,7 +6,11 @@ namespace MatchedSuite.Statistics.Pairs;
 /// <remarks>Source: Hedges (1981), Journal of Educational Statistics 6, 107-128; exact form, not 1 − 3/(4df − 1).</remarks>
 internal static class HedgesCorrection
 {
-    /// <summary>J for a whole number of degrees of freedom; NaN at 1, where mean over sd has no expectation to correct.</summary>
-    public static double Factor(int df) =>
-        df < 2 ? double.NaN : StirlingCorrection.HalfStepRatio((df - 1) / 2.0) * Math.Sqrt((df - 1.0) / df);
+    /// <summary>J for these degrees of freedom, infinite ones too; NaN up to 1, where mean over sd has no expectation to correct.</summary>
+    public static double Factor(double df) => df switch
+    {
+        <= 1 => double.NaN,
+        double.PositiveInfinity => 1,
+        _ => StirlingCorrection.HalfStepRatio((df - 1) / 2) * Math.Sqrt((df - 1) / df),
+    };
 }

@@ -1,11 +1,10 @@
-using MatchedSuite.Statistics.Distributions;
-
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>Paired t-test: is the mean within-pair difference zero?</summary>
 /// <remarks>
 /// <para>Statistic: mean / (sd/√n) with n − 1 degrees of freedom. Estimate, standard error and interval are in the endpoint's
-/// unit. Effect size: mean / sd times Hedges' exact correction; NaN for two pairs, where it does not exist.</para>
+/// unit. Effect size: mean / sd times Hedges' exact correction; NaN for two pairs, where it does not exist. Its interval is given
+/// by <see cref="EffectSizeInterval"/>.</para>
 /// <para>Mean and sum of squares take two passes, the second about the mean of the first, so large offsets lose no digit that
 /// the differences still have.</para>
 /// <para>Assumes independent pairs, and near-normal differences or many pairs.</para>
@@ -34,19 +33,10 @@ public static class PairedT
 
         var (mean, deviation) = MeanAndDeviation.Of(pairs.Differences, scratch);
         int df = n - 1;
-        double error = deviation / Math.Sqrt(n);
-        double t = mean / error;
-        double reach = error * StudentTQuantiles.Upper(options.TailShare, df);
-        return new TestResult
+        return StudentTest.Of(mean, deviation / Math.Sqrt(n), df, options) with
         {
             Sets = n,
             Samples = 2 * n,
-            Estimate = mean,
-            StandardError = error,
-            Interval = Interval.Pointing(mean - reach, mean + reach, options.Sides),
-            Statistic = t,
-            DegreesOfFreedom = df,
-            P = Tails.ForSides(options.Sides, StudentT.LowerTail(t, df), StudentT.UpperTail(t, df)),
             EffectSize = HedgesCorrection.Factor(df) * mean / deviation,
         };
     }

@@ -1,5 +1,3 @@
-using MatchedSuite.Statistics.Distributions;
-
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>Wilcoxon's signed-rank test: do the differences lie symmetrically about zero?</summary>
@@ -44,25 +42,8 @@ public static class SignedRank
             return TestResult.Untested(Outcome.NothingDiffers, n, 2 * n, Remarks.Zeros);
 
         bool isExact = ranks.Ranked <= (ranks.HasTies ? LargestExactWithTies : LargestExactWithoutTies);
-        var (lower, upper) = isExact ? ExactTails(ranks, scratch) : SignedRankNormal.Tails(Sum(ranks), ranks.Ranked, ranks.TieTerm);
-        long quantile = isExact && n <= LargestExactWithoutTies
-            ? SignedRankNull.Of(n).LowerQuantile(options.TailShare)
-            : SignedRankNormal.LowerQuantile(n, options.TailShare);
-        var (estimate, low, high) = HodgesLehmann.Of(ranks.Sorted, quantile, scratch);
-        double half = (double)ranks.Ranked * (ranks.Ranked + 1) / 4;
-        return new TestResult
-        {
-            Sets = n,
-            Samples = 2 * n,
-            Estimate = estimate,
-            Interval = Interval.Pointing(low, high, options.Sides),
-            Statistic = Sum(ranks),
-            P = Tails.ForSides(options.Sides, lower, upper),
-            EffectSize = (Sum(ranks) - half) / half,
-            SmallestPossibleP = isExact ? SignFlips.SmallestP(ranks.Ranked, options.Sides) : Probability.Missing,
-            Remarks = (ranks.HasTies ? Remarks.Ties : 0) | (ranks.Zeros > 0 ? Remarks.Zeros : 0)
-                | (isExact ? Remarks.Exact : 0) | (quantile == 0 ? Remarks.WideAsData : 0),
-        };
+        var tails = isExact ? ExactTails(ranks, scratch) : SignedRankNormal.Tails(Sum(ranks), ranks.Ranked, 0, ranks.TieTerm);
+        return SignedRankResult.Of(ranks, isExact, Sum(ranks), (double)ranks.Ranked * (ranks.Ranked + 1) / 4, tails, options, scratch);
     }
 
     private static double Sum(in SignedRanks ranks) => 0.5 * ranks.DoubledPositiveSum;

@@ -9,10 +9,12 @@ namespace MatchedSuite.Statistics.Pairs;
 /// </remarks>
 internal readonly ref struct SignedRanks
 {
-    private SignedRanks(ReadOnlySpan<double> sorted, int zeros, ReadOnlySpan<int> doubledRanks, long doubledPositiveSum, double tieTerm)
+    private SignedRanks(
+        ReadOnlySpan<double> sorted, int zeros, int positive, ReadOnlySpan<int> doubledRanks, long doubledPositiveSum, double tieTerm)
     {
         Sorted = sorted;
         Zeros = zeros;
+        Positive = positive;
         DoubledRanks = doubledRanks;
         DoubledPositiveSum = doubledPositiveSum;
         TieTerm = tieTerm;
@@ -23,6 +25,9 @@ internal readonly ref struct SignedRanks
 
     /// <summary>Number of zero differences; they have no rank.</summary>
     public int Zeros { get; }
+
+    /// <summary>Number of positive differences.</summary>
+    public int Positive { get; }
 
     /// <summary>Number of ranked differences.</summary>
     public int Ranked => Sorted.Length - Zeros;
@@ -64,7 +69,7 @@ internal readonly ref struct SignedRanks
         long positiveSum = Merge(sorted[..negative], sorted[firstPositive..], sizes, signs);
         double largestRounding = n == 0 ? 0 : FixedLanes.Largest(pairs.Roundings);
         if (AllApart(sizes, largestRounding))
-            return new SignedRanks(sorted, firstPositive - negative, default, 2 * positiveSum, 0);
+            return new SignedRanks(sorted, firstPositive - negative, n - firstPositive, default, 2 * positiveSum, 0);
 
         Span<int> doubledRanks = frame.Integers(ranked);
         double tieTerm = TieGroups.Rank(pairs, sizes, doubledRanks, frame);
@@ -79,7 +84,7 @@ internal readonly ref struct SignedRanks
                 sorted[above++] = sizes[i];
         }
 
-        return new SignedRanks(sorted, firstPositive - negative, doubledRanks, doubledPositiveSum, tieTerm);
+        return new SignedRanks(sorted, firstPositive - negative, n - firstPositive, doubledRanks, doubledPositiveSum, tieTerm);
     }
 
     // Sizes in ascending order out of the two sorted halves; sign 1 is positive. Gives the sum of the positives' places.

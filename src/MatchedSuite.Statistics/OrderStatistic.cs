@@ -1,4 +1,4 @@
-namespace MatchedSuite.Statistics.Sets;
+namespace MatchedSuite.Statistics;
 
 /// <summary>The value that stands at a place in ascending order, without sorting all.</summary>
 /// <remarks>Source: Hoare (1961), Algorithm 65: Find, Communications of the ACM 4(7), 321-322; pivot: median of three.</remarks>
