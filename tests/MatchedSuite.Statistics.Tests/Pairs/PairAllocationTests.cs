@@ -14,15 +14,27 @@ public class PairAllocationTests
         double[] coarse = [.. index.Take(48).Select(v => Math.Round(v, 1))];
         double[] bits = [.. index.Select(v => v > 0.4 ? 1.0 : 0.0)];
         var scratch = new Scratch();
-        foreach (Run run in new Run[] { PairedT.Run, SignedRank.Run, SignTest.Run })
+        foreach (Run run in new Run[] { PairedT.Run, SignedRank.Run, SignedRankPratt.Run, SignTest.Run, TrimmedMean.Run, SignFlipMean.Run, Adjusted, Slope })
         {
             Assert.Equal(0, Allocated(run, index, new double[200], scratch));
             Assert.Equal(0, Allocated(run, coarse, new double[48], scratch));
         }
 
+        double[] codes = [.. index.Select(v => Math.Floor(4 * v))];
+        foreach (Run run in new Run[] { Bowker.Run, StuartMaxwell.Run, PairedPoisson.Run })
+            Assert.Equal(0, Allocated(run, codes, new double[200], scratch));
+
         foreach (Run run in new Run[] { McNemar.Run, McNemarCorrected.Run, McNemarExact.Run, McNemarMidP.Run })
             Assert.Equal(0, Allocated(run, bits, new double[200], scratch));
     }
+
+    private static readonly double[] Covariates = [.. Enumerable.Range(0, 400).Select(i => Math.Sin(1 + (1.7 * i)))];
+
+    private static TestResult Adjusted(in PairSample pairs, TestOptions options, Scratch scratch) =>
+        AdjustedPairedT.Run(RegressionPairs.WithCovariates(pairs, Covariates.AsSpan(0, 2 * pairs.Count)), options, scratch);
+
+    private static TestResult Slope(in PairSample pairs, TestOptions options, Scratch scratch) => WithinPairSlope.Run(
+        RegressionPairs.WithExposure(pairs, Covariates.AsSpan(0, pairs.Count), Covariates.AsSpan(1, pairs.Count)), options, scratch);
 
     private static long Allocated(Run run, double[] index, double[] reference, Scratch scratch)
     {

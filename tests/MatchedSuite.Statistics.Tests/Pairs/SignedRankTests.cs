@@ -65,7 +65,7 @@ public class SignedRankTests
     public void Around_the_border_the_approximation_agrees_with_the_exact_tail()
     {
         var exact = SignedRankNull.Of(500).AtMost(56_000);
-        var (approximate, _) = SignedRankNormal.Tails(56_000, 500, 0);
+        var (approximate, _) = SignedRankNormal.Tails(56_000, 500, 0, 0);
         Assert.Equal(exact.Log10, approximate.Log10, tolerance: 0.001);
     }
 
