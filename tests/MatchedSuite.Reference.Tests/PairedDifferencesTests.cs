@@ -5,7 +5,7 @@ using MatchedSuite.Statistics.Pairs;
 namespace MatchedSuite.Reference.Tests;
 
 /// <summary>
-/// Paired-t, signed-rank and sign test on eleven published or invented data sets. The expected numbers come from base R 4.2.2 and
+/// Paired-t, signed-rank (both treatments of zeros), sign and sign-flip test on eleven published or invented data sets. The expected numbers come from base R 4.2.2 and
 /// from exact fractions with mpmath at 50 digits (Inputs/README.md, "Definitions"); d is the first column minus the second.
 /// </summary>
 public class PairedDifferencesTests
@@ -34,6 +34,9 @@ public class PairedDifferencesTests
     [InlineData("paired_t", 11 * 15)]
     [InlineData("signed_rank.drop_zeros.exact", 11 * 8)]
     [InlineData("signed_rank.drop_zeros.normal.corrected", 11 * 9)]
+    [InlineData("signed_rank.pratt.exact", 11 * 6)]
+    [InlineData("signed_rank.pratt.normal.corrected", 11 * 8)]
+    [InlineData("signflip_mean.exact", 6 * 8)]
     [InlineData("hodges_lehmann", 11 * 6)]
     [InlineData("sign_test", 11 * 9)]
     public void Every_quantity_of_every_paired_data_set_agrees(string @case, int quantities)
@@ -68,6 +71,9 @@ public class PairedDifferencesTests
         "paired_t" => PairedTMeasures,
         "signed_rank.drop_zeros.exact" => SignedRankMeasures,
         "signed_rank.drop_zeros.normal.corrected" => SignedRankNormalMeasures,
+        "signed_rank.pratt.exact" => PrattMeasures,
+        "signed_rank.pratt.normal.corrected" => PrattNormalMeasures,
+        "signflip_mean.exact" => SignFlipMeasures,
         "hodges_lehmann" => HodgesLehmannMeasures,
         _ => SignMeasures,
     };
@@ -134,6 +140,41 @@ public class PairedDifferencesTests
         },
     };
 
+    private static readonly Dictionary<string, Measure> PrattMeasures = new()
+    {
+        ["n"] = (in p, s) => SignedRankPratt.Run(p, TestOptions.Default, s).Sets,
+        ["n_zero"] = (in p, s) => Ranks(p, s).Zeros,
+        ["W_plus"] = (in p, s) => SignedRankPratt.Run(p, TestOptions.Default, s).Statistic,
+        ["p_two"] = (in p, s) => SignedRankPratt.Run(p, TestOptions.Default, s).P.Value,
+        ["p_greater"] = (in p, s) => SignedRankPratt.Run(p, For(Sides.Greater), s).P.Value,
+        ["p_less"] = (in p, s) => SignedRankPratt.Run(p, For(Sides.Less), s).P.Value,
+    };
+
+    private static readonly Dictionary<string, Measure> PrattNormalMeasures = new()
+    {
+        ["n"] = (in p, s) => p.Count,
+        ["n_zero"] = (in p, s) => Ranks(p, s).Zeros,
+        ["W_plus"] = (in p, s) => PrattSum(p, s),
+        ["W_minus"] = (in p, s) => PrattTotal(p, s) - PrattSum(p, s),
+        ["p_two"] = (in p, s) => PrattNormalP(p, s, Sides.Two).Value,
+        ["p_greater"] = (in p, s) => PrattNormalP(p, s, Sides.Greater).Value,
+        ["p_less"] = (in p, s) => PrattNormalP(p, s, Sides.Less).Value,
+        ["z_two"] = (in p, s) => Math.CopySign(
+            StandardNormal.UpperQuantile(PrattNormalP(p, s, Sides.Two).Times(0.5)), (2 * PrattSum(p, s)) - PrattTotal(p, s)),
+    };
+
+    private static readonly Dictionary<string, Measure> SignFlipMeasures = new()
+    {
+        ["n"] = (in p, s) => SignFlipMean.Run(p, TestOptions.Default, s).Sets,
+        ["n_flips"] = (in p, s) => 1L << p.Count,
+        ["count_greater"] = (in p, s) => SignFlipMean.Run(p, For(Sides.Greater), s).P.Value * (1L << p.Count),
+        ["count_less"] = (in p, s) => SignFlipMean.Run(p, For(Sides.Less), s).P.Value * (1L << p.Count),
+        ["count_two"] = (in p, s) => SignFlipMean.Run(p, TestOptions.Default, s).P.Value * (1L << p.Count),
+        ["p_two"] = (in p, s) => SignFlipMean.Run(p, TestOptions.Default, s).P.Value,
+        ["p_greater"] = (in p, s) => SignFlipMean.Run(p, For(Sides.Greater), s).P.Value,
+        ["p_less"] = (in p, s) => SignFlipMean.Run(p, For(Sides.Less), s).P.Value,
+    };
+
     private static readonly Dictionary<string, Measure> SignMeasures = new()
     {
         ["n_pos"] = (in p, s) => SignTest.Run(p, TestOptions.Default, s).Statistic,
@@ -158,6 +199,22 @@ public class PairedDifferencesTests
     {
         var ranks = Ranks(pairs, scratch);
         var (lower, upper) = SignedRankNormal.Tails(ranks.Sum, ranks.Ranked, 0, ranks.TieTerm);
+        return Tails.ForSides(sides, lower, upper);
+    }
+
+    private static double PrattSum(in PairSample pairs, Scratch scratch) =>
+        SignedRankPratt.Run(pairs, TestOptions.Default, scratch).Statistic;
+
+    private static double PrattTotal(in PairSample pairs, Scratch scratch)
+    {
+        double n = pairs.Count, zeros = Ranks(pairs, scratch).Zeros;
+        return ((n * (n + 1)) - (zeros * (zeros + 1))) / 2;
+    }
+
+    private static Probability PrattNormalP(in PairSample pairs, Scratch scratch, Sides sides)
+    {
+        var ranks = Ranks(pairs, scratch);
+        var (lower, upper) = SignedRankNormal.Tails(PrattSum(pairs, scratch), pairs.Count, ranks.Zeros, ranks.TieTerm);
         return Tails.ForSides(sides, lower, upper);
     }
 
