@@ -83,6 +83,53 @@ public class RegressionOnDifferencesTests
         Assert.Equal(0.2362762088201780, adjusted.P.Value, tolerance: 1e-14);
     }
 
+    // Twenty discordant pairs, 1 where the index member has the sign; invented, with two covariate differences.
+    private static readonly double[] IndexHasIt = [1, 1, 0, 1, 0, 1, 1, 1, 0, 1, 0, 1, 1, 0, 1, 1, 0, 1, 1, 1];
+
+    private static readonly double[] BinaryCovariates =
+    [
+        1.2, -0.4, 0.7, 2.1, -1.5, 0.3, 0.9, -0.8, 1.6, 0.1, -1, 0.5, 1.1, -0.6, 0.2, 1.9, -0.3, -1.2, 0.8, 0.4,
+        3, 1, -2, 4, 0, 1, -1, 2, 5, -3, 1, 0, 2, -1, 1, 0, 3, -2, 1, 2,
+    ];
+
+    [Fact]
+    public void An_adjusted_odds_ratio_is_the_constant_of_a_logistic_regression_on_discordant_pairs()
+    {
+        // base R 4.2.2: glm(y ~ x + z, family = binomial, control = list(epsilon = 1e-15))
+        var adjusted = OddsRatio(IndexHasIt, BinaryCovariates);
+        Assert.Equal(0.9322524143042363, adjusted.Estimate, tolerance: 1e-10);
+        Assert.Equal(0.6036916913445095, adjusted.StandardError, tolerance: 1e-10);
+        Assert.Equal(1.5442525177511954, adjusted.Statistic, tolerance: 1e-10);
+        Assert.Equal(0.1225271705498399, adjusted.P.Value, tolerance: 1e-10);
+        Assert.Equal(20, adjusted.Sets);
+        var plain = OddsRatio(IndexHasIt, []);
+        Assert.Equal(Math.Log(14.0 / 6), plain.Estimate, tolerance: 1e-12);
+        Assert.Equal(Math.Sqrt((1.0 / 14) + (1.0 / 6)), plain.StandardError, tolerance: 1e-12);
+    }
+
+    [Fact]
+    public void Concordant_pairs_change_no_odds_ratio_and_one_that_leans_one_way_is_marked()
+    {
+        double[] index = [.. IndexHasIt, 1, 0, 1], reference = [.. IndexHasIt.Select(v => 1 - v), 1, 0, 1];
+        double[] covariates = [.. BinaryCovariates[..20], 9, 9, 9, .. BinaryCovariates[20..], -9, 9, 0];
+        var more = OddsRatio(index, reference, covariates);
+        Assert.Equal(OddsRatio(IndexHasIt, BinaryCovariates) with { Sets = 23, Samples = 46 }, more);
+        Assert.True(OddsRatio([1, 1, 1, 1], [0.1, -0.3, 0.2, 0.4]).Remarks.HasFlag(Remarks.Separated));
+        Assert.Equal(Outcome.NothingDiffers, OddsRatio([1, 0], [1, 0], [1, 2]).Outcome);
+        Assert.Throws<ArgumentException>(() => OddsRatio([2], [1], [1]));
+    }
+
+    private static TestResult OddsRatio(double[] indexHasIt, double[] covariates) =>
+        OddsRatio(indexHasIt, [.. indexHasIt.Select(v => 1 - v)], covariates);
+
+    private static TestResult OddsRatio(double[] index, double[] reference, double[] covariates)
+    {
+        var scratch = new Scratch();
+        using var frame = scratch.Open();
+        return AdjustedOddsRatio.Run(
+            RegressionPairs.WithCovariates(PairSample.Of(index, reference, frame), covariates), TestOptions.Default, scratch);
+    }
+
     private delegate TestResult Regression(RegressionPairs sample, TestOptions options, Scratch scratch);
 
     private static TestResult OnSleep(Regression regression, bool exposed)

@@ -35,6 +35,8 @@ internal static class PairMethods
         ["mcnemar-corrected"] = OnColumns(McNemarCorrected.Run),
         ["mcnemar-exact"] = OnColumns(McNemarExact.Run),
         ["mcnemar-midp"] = OnColumns(McNemarMidP.Run),
+        ["mcnemar, adjusted"] = OnColumns((in PairSample pairs, TestOptions options, Scratch scratch) =>
+            OnIndexed(AdjustedOddsRatio.Run, pairs, exposure: false, options, scratch)),
     };
 
     /// <summary>Methods on codes of categories; they have no direction.</summary>
