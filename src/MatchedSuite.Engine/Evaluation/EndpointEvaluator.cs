@@ -20,7 +20,7 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
     /// <summary>Working memory of this worker.</summary>
     protected Scratch Scratch { get; } = new();
 
-    /// <summary>Adds the rows of one endpoint: contrast by contrast, all sets before each stratum, method by method.</summary>
+    /// <summary>Adds the rows of one endpoint: contrast by contrast, method by method, all sets before each stratum.</summary>
     /// <param name="values">The endpoint's values in the order of the arrangement's rows, NaN where missing; changed in place by the transform.</param>
     /// <param name="endpoint">What is known of the endpoint.</param>
     /// <param name="position">The endpoint's position within its block, written into the rows.</param>

@@ -1,68 +1,146 @@
+using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics;
-using MatchedSuite.Statistics.Pairs;
+using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Endpoints;
 
 namespace MatchedSuite.Engine.Evaluation;
 
 /// <summary>Computes the rows of an endpoint measured on pairs, or on two visits of the same people.</summary>
-internal sealed class PairsEvaluator(AnalysisPlan plan, PairsDesign design) : EndpointEvaluator(plan)
+internal sealed class PairsEvaluator : EndpointEvaluator
 {
+    private readonly PairsDesign _design;
+    private readonly StrataSets _strata;
+    private readonly StrataRows _between;
+
+    public PairsEvaluator(AnalysisPlan plan, PairsDesign design)
+        : base(plan)
+    {
+        _design = design;
+        _strata = StrataSets.Of(plan.Arrangement);
+        _between = new StrataRows(plan.Arrangement.Strata.Length, plan.Options);
+    }
+
     /// <inheritdoc/>
     protected override void AddRows(Span<double> values, EndpointInfo endpoint, BlockOutput output, out int undefined)
     {
-        undefined = 0;
-        for (short contrast = 0; contrast < design.Comparisons.Count; contrast++)
+        using Scratch.Frame frame = Scratch.Open();
+        double? detection = endpoint.Kind == EndpointKind.Continuous ? endpoint.DetectionLimit : null;
+        Span<double> above = detection is null ? [] : frame.Doubles(values.Length);
+        if (detection is { } limit)
         {
-            PairContrast places = design.Comparisons[contrast];
-            using Scratch.Frame frame = Scratch.Open();
-            Span<double> index = frame.Doubles(places.Index.Sets);
-            Span<double> reference = frame.Doubles(places.Index.Sets);
-            places.Index.Gather(values, index);
-            places.Reference.Gather(values, reference);
-            undefined += ValueTransform.Apply(endpoint.Transform, index) + ValueTransform.Apply(endpoint.Transform, reference);
-            int before = output.Rows.Count;
-            AddRows(index, reference, endpoint, ResultRow.AllStrata, output);
-            for (short stratum = 0; stratum < Plan.Arrangement.Strata.Length; stratum++)
-                AddRows(index, reference, endpoint, stratum, output);
-            foreach (ref ResultRow row in output.Rows.Records[before..])
+            BelowLimitRule.Above(limit, values, above);
+            BelowLimitRule.Apply(Plan.Study.Endpoints.BelowLimit, limit, values);
+        }
+
+        undefined = 0;
+        for (short contrast = 0; contrast < _design.Comparisons.Count; contrast++)
+        {
+            int rowsBefore = output.Rows.Count;
+            int detailsBefore = output.Details.Count;
+            undefined += AddContrast(values, above, endpoint, _design.Comparisons[contrast], output);
+            foreach (ref ResultRow row in output.Rows.Records[rowsBefore..])
                 row.Contrast = contrast;
+            foreach (ref DetailRow detail in output.Details.Records[detailsBefore..])
+                detail.Contrast = contrast;
         }
     }
 
-    private void AddRows(
-        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, EndpointInfo endpoint, short stratum, BlockOutput output)
+    private int AddContrast(ReadOnlySpan<double> values, ReadOnlySpan<double> above, EndpointInfo endpoint, PairContrast places, BlockOutput output)
     {
         using Scratch.Frame frame = Scratch.Open();
-        Span<double> completeIndex = frame.Doubles(index.Length);
-        Span<double> completeReference = frame.Doubles(index.Length);
-        ReadOnlySpan<int> stratumOfSet = Plan.Arrangement.StratumOfSet;
-        int designed = 0;
-        int complete = 0;
-        for (int set = 0; set < index.Length; set++)
-        {
-            if (stratum != ResultRow.AllStrata && stratumOfSet[set] != stratum)
-                continue;
-            designed++;
-            if (double.IsNaN(index[set]) || double.IsNaN(reference[set]))
-                continue;
-            completeIndex[complete] = index[set];
-            completeReference[complete] = reference[set];
-            complete++;
-        }
+        Span<double> both = frame.Doubles(2 * places.Index.Sets);
+        Span<double> index = both[..places.Index.Sets];
+        Span<double> reference = both[places.Index.Sets..];
+        places.Index.Gather(values, index);
+        places.Reference.Gather(values, reference);
+        int undefined = Transformed(endpoint.Transform, both);
+        int before = output.Rows.Count;
+        foreach (PlannedMethod planned in _design.MethodsFor(endpoint.Kind))
+            AddMethod(index, reference, places, planned, endpoint, output);
+        PairDetails.Add(index, reference, places, endpoint, _strata, Plan, _design.Settings, output.Details, Scratch);
+        if (Plan.Study.Endpoints.PerStandardDeviation && endpoint.Kind == EndpointKind.Continuous)
+            StandardScale.Apply(reference, output.Rows.Records[before..], Scratch);
+        if (!above.IsEmpty)
+            AddAboveBelow(above, places, endpoint, before, output);
+        return undefined;
+    }
 
-        TestResult? untested = UntestedBefore(designed, complete, 2 * complete);
-        PairSample pairs = PairSample.Of(completeIndex[..complete], completeReference[..complete], frame);
-        foreach (PlannedMethod planned in design.MethodsFor(endpoint.Kind))
+    private int Transformed(Transform transform, Span<double> values)
+    {
+        if (transform != Transform.RankNormal)
+            return ValueTransform.Apply(transform, values);
+        RankNormalScores.Of(values, values, Scratch);
+        return 0;
+    }
+
+    // All sets first, then each stratum, then the comparison between strata.
+    private void AddMethod(
+        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, PairContrast places, PlannedMethod planned, EndpointInfo endpoint, BlockOutput output)
+    {
+        CovariateUse covariates = places.Columns.Covariates.Length == 0 ? CovariateUse.Ignored : planned.Method.Covariates;
+        LogBase logBase = EstimateLogBase.Of(planned.Method.Scale, endpoint.Transform);
+        Remarks unadjusted = places.Columns.Covariates.Length > 0 && covariates == CovariateUse.Ignored ? Remarks.Unadjusted : Remarks.None;
+        int before = output.Rows.Count;
+        _between.Clear();
+        for (short stratum = ResultRow.AllStrata; stratum < _strata.Count; stratum++)
         {
+            using Scratch.Frame frame = Scratch.Open();
+            CompletePairs pairs = CompletePairs.Of(index, reference, _strata.SetsOf(stratum), places.Columns, covariates, _design.Settings, frame);
+            TestResult result = UntestedBefore(pairs.Designed, pairs.Count, 2 * pairs.Count) ?? planned.Method.Test(pairs.Input, Plan.Options, Scratch);
             ref ResultRow row = ref output.Rows.Add();
             row.Stratum = stratum;
+            row.Missing = pairs.Designed - pairs.Count;
+            row.Take(result);
+            if (stratum != ResultRow.AllStrata)
+                _between.Keep(stratum, result, pairs.Input.Pairs, endpoint.Kind);
+        }
+
+        if (_strata.Count > 1 && planned.Method.Strata != StrataComparison.None)
+            _between.AddRow(planned.Method.Strata, output.Rows);
+        foreach (ref ResultRow row in output.Rows.Records[before..])
+        {
             row.Method = planned.Code;
             row.Primary = planned.IsPrimary ? (short)1 : (short)0;
-            row.LogBase = (short)EstimateLogBase.Of(planned.Method.Scale, endpoint.Transform);
-            row.Missing = designed - complete;
-            row.Take(untested ?? planned.Method.Test(pairs, Plan.Options, Scratch));
+            row.LogBase = (short)logBase;
+            row.Remarks |= unadjusted;
         }
+    }
+
+    // Counts per role; where most values lie below the limit, the rows say so and above against below is tested beside them.
+    private void AddAboveBelow(ReadOnlySpan<double> above, PairContrast places, EndpointInfo endpoint, int rowsBefore, BlockOutput output)
+    {
+        using Scratch.Frame frame = Scratch.Open();
+        Span<double> index = frame.Doubles(places.Index.Sets);
+        Span<double> reference = frame.Doubles(places.Index.Sets);
+        places.Index.Gather(above, index);
+        places.Reference.Gather(above, reference);
+        var (belowIndex, knownIndex) = CountBelow(index);
+        var (belowReference, knownReference) = CountBelow(reference);
+        PairDetails.AddNumber(output.Details, ResultRow.AllStrata, Quantity.IndexBelowLimit, belowIndex);
+        PairDetails.AddNumber(output.Details, ResultRow.AllStrata, Quantity.ReferenceBelowLimit, belowReference);
+        if (2 * (belowIndex + belowReference) <= knownIndex + knownReference)
+            return;
+        foreach (ref ResultRow row in output.Rows.Records[rowsBefore..])
+            row.Remarks |= Remarks.MostlyBelowLimit;
+        AddMethod(index, reference, places, _design.AboveBelow!, endpoint with { Kind = EndpointKind.Binary, Transform = Transform.None }, output);
+    }
+
+    // A mean of replicates on both sides of the limit counts as above from one half on.
+    private static (int Below, int Known) CountBelow(Span<double> above)
+    {
+        int below = 0;
+        int known = 0;
+        foreach (ref double value in above)
+        {
+            if (double.IsNaN(value))
+                continue;
+            value = value < 0.5 ? 0 : 1;
+            known++;
+            below += value == 0 ? 1 : 0;
+        }
+
+        return (below, known);
     }
 }

@@ -15,9 +15,13 @@ public static class Available
         Methods = ByDesignAndKind((design, kind) => design.MethodsFor(kind)),
         DefaultMethods = ByDesignAndKind((design, kind) => [.. KnownNames.UsualMethods(design.Kind, kind).Where(design.MethodsFor(kind).Contains)]),
         Adjustments = [.. AdjustmentTable.All.Select(adjustment => adjustment.Name)],
-        Transforms = new HashSet<Transform> { Transform.None, Transform.Log, Transform.Log2, Transform.Log10, Transform.Sqrt },
+        Transforms = Enum.GetValues<Transform>().ToHashSet(),
         Families = new HashSet<FamilyRule> { FamilyRule.All, FamilyRule.ByFamily },
-        Keys = new HashSet<string>(),
+        Keys = new HashSet<string>
+        {
+            "design.exposure", "design.stratum", "design.covariates", "design.person-time",
+            "endpoints.below-limit", "endpoints.scale", "analysis.zeros",
+        },
     };
 
     private static Dictionary<(DesignKind Design, EndpointKind Endpoint), IReadOnlyList<string>> ByDesignAndKind(

@@ -49,6 +49,9 @@ public sealed class AnalysisPlan
     /// <summary>Names of all planned methods; a row's method code is a position here.</summary>
     public IReadOnlyList<string> MethodNames => _design.Methods;
 
+    /// <summary>What looks odd once the design is laid out, one sentence each.</summary>
+    public IReadOnlyList<string> Warnings => _design.Warnings;
+
     /// <summary>Direction and confidence of every test.</summary>
     public TestOptions Options { get; }
 

@@ -11,6 +11,9 @@ public interface IDesign
     /// <summary>Names of the methods; a row's method code is a position here.</summary>
     IReadOnlyList<string> Methods { get; }
 
+    /// <summary>What looks odd once the design is laid out, one sentence each.</summary>
+    IReadOnlyList<string> Warnings => [];
+
     /// <summary>An evaluator for one worker.</summary>
     EndpointEvaluator NewEvaluator(AnalysisPlan plan);
 }

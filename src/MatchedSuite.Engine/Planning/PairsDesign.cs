@@ -6,9 +6,12 @@ using MatchedSuite.Study.Matching;
 
 namespace MatchedSuite.Engine.Planning;
 
-/// <summary>Pairs: one comparison of the index with the reference role.</summary>
+/// <summary>Pairs: one comparison of the index with the reference role, or the slope on a measured exposure.</summary>
 public sealed class PairsDesign : IDesign
 {
+    /// <summary>Compares values above with values below a detection limit where most values are below.</summary>
+    private const string AboveBelowMethod = "mcnemar-exact";
+
     private readonly MethodCodes _codes = new();
     private readonly Dictionary<EndpointKind, PlannedMethod[]> _methods;
 
@@ -17,11 +20,19 @@ public sealed class PairsDesign : IDesign
     {
         StudyDefinition study = inputs.Study;
         Arrangement arrangement = inputs.Audit.Arrangement;
-        Comparisons = [new PairContrast(PairContrast.IndexReference, arrangement.Places[0], arrangement.Places[1])];
-        Contrasts = [PairContrast.IndexReference];
+        string contrast = study.Design.Exposure is null ? PairContrast.IndexReference : PairContrast.PerUnit;
+        Place index = arrangement.Places[0];
+        Place reference = arrangement.Places[1];
+        Comparisons = [new PairContrast(contrast, index, reference, PairColumns.Of(inputs, index, reference))];
+        Contrasts = [contrast];
         _methods = study.Analysis.Methods.ToDictionary(
             of => of.Key,
-            of => of.Value.Select((name, position) => new PlannedMethod(_codes.CodeOf(name), PairMethodTable.Named(name), position == 0)).ToArray());
+            of => of.Value.Select((name, position) => Planned(name, position == 0)).ToArray());
+        if (inputs.Catalogue.HasDetectionLimits)
+            AboveBelow = Planned(AboveBelowMethod, isPrimary: false);
+        Settings = PairSettings.Of(study);
+        Warnings = [.. Comparisons[0].Columns.CollinearNames().Select(name =>
+            $"covariate '{name}' is the same within every set or follows from the others; results are not adjusted for it")];
     }
 
     /// <summary>The comparisons, in output order.</summary>
@@ -33,9 +44,20 @@ public sealed class PairsDesign : IDesign
     /// <inheritdoc/>
     public IReadOnlyList<string> Methods => _codes.Names;
 
+    /// <inheritdoc/>
+    public IReadOnlyList<string> Warnings { get; }
+
+    /// <summary>What the study file decides for the methods of all endpoints.</summary>
+    public PairSettings Settings { get; }
+
+    /// <summary>The method for values above and below a detection limit; null where no endpoint has one.</summary>
+    public PlannedMethod? AboveBelow { get; }
+
     /// <summary>The methods for a kind of endpoint, the primary one first.</summary>
     public IReadOnlyList<PlannedMethod> MethodsFor(EndpointKind kind) => _methods[kind];
 
     /// <inheritdoc/>
     public EndpointEvaluator NewEvaluator(AnalysisPlan plan) => new PairsEvaluator(plan, this);
+
+    private PlannedMethod Planned(string name, bool isPrimary) => new(_codes.CodeOf(name), PairMethodTable.Named(name), isPrimary);
 }

@@ -40,6 +40,10 @@ public class RecordStore<T> : IDisposable
         Count += records.Length;
     }
 
+    /// <summary>Puts another record in the place of one that is there.</summary>
+    public void Rewrite(int position, in T record) =>
+        RandomAccess.Write(_file, MemoryMarshal.AsBytes(new ReadOnlySpan<T>(in record)), (long)position * RecordBytes);
+
     /// <summary>Reads records from position <paramref name="first"/> on.</summary>
     public void Read(int first, Span<T> records)
     {

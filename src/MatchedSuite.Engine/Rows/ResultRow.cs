@@ -79,6 +79,33 @@ public struct ResultRow
     /// <summary>True where a test was made.</summary>
     public readonly bool IsTested => Outcome == (short)Statistics.Outcome.Tested;
 
+    /// <summary>What the method found, as it was taken over.</summary>
+    public readonly TestResult ToTestResult() => new()
+    {
+        Outcome = (Statistics.Outcome)Outcome,
+        Sets = Sets,
+        Samples = Samples,
+        Estimate = Estimate,
+        StandardError = StandardError,
+        Interval = new Interval(Low, High),
+        EffectSize = EffectSize,
+        Statistic = Statistic,
+        DegreesOfFreedom = DegreesOfFreedom,
+        DenominatorDegreesOfFreedom = DenominatorDegreesOfFreedom,
+        P = P,
+        SmallestPossibleP = SmallestPossibleP,
+        Remarks = Remarks,
+    };
+
+    /// <summary>Divides estimate, standard error and limits: from the endpoint's unit to standard deviations.</summary>
+    public void DivideBy(double unit)
+    {
+        Estimate /= unit;
+        StandardError /= unit;
+        Low /= unit;
+        High /= unit;
+    }
+
     /// <summary>Takes over what a method found.</summary>
     public void Take(in TestResult result)
     {

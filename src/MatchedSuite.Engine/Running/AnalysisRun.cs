@@ -74,18 +74,22 @@ public sealed class AnalysisRun
 
     private FinishedRun Analyse(StudyInputs inputs, CancellationToken cancellation)
     {
-        AnalysisPlan plan = new AnalysisPlan(inputs);
+        var plan = new AnalysisPlan(inputs);
+        Warn(plan.Warnings);
         using var store = new ResultStore(_folder.Partial);
         EndpointStream stream = EndpointStream.Run(plan, inputs.Source, store, _options, _observer, cancellation);
         RefuseNoEndpoints(stream);
         WarnOfStream(stream, plan);
+        string Family(int endpoint) => plan.Catalogue.Describe(stream.Names[endpoint]).Family;
+        ModeratedFinish.Run(store.Rows, plan, Family);
         _execution.StepDone("tests");
 
-        AdjustedColumns adjusted = RowAdjuster.Run(store.Rows, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]).Family);
+        AdjustedColumns adjusted = RowAdjuster.Run(store.Rows, plan, Family);
         _execution.StepDone("adjustment");
         var tables = new ResultTables(store.Rows, adjusted, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]));
         tables.WriteResults(_folder);
         DetailTable.Write(_folder, store.Details, plan, stream.Names);
+        TwinTable.Write(_folder, store.Details, plan, stream.Names);
         SummaryOrder summary = tables.WriteSummary(_folder);
         tables.WriteUntested(_folder);
         _execution.StepDone("tables");

@@ -5,7 +5,7 @@ namespace MatchedSuite.Statistics.Pairs;
 /// The second pass sums the deviations from the first mean: their sum corrects the mean, and their squares, less what the
 /// correction explains, give the variance. Source: Chan, Golub and LeVeque (1983), The American Statistician 37, 242-247.
 /// </remarks>
-internal static class MeanAndDeviation
+public static class MeanAndDeviation
 {
     // Between these sizes no square underflows or overflows in a way that costs a digit.
     private const double SmallestPlain = 1e-140;

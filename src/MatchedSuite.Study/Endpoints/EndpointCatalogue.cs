@@ -35,6 +35,9 @@ public sealed class EndpointCatalogue
     /// <summary>What looks odd before any data are read, one sentence each.</summary>
     public IReadOnlyList<string> Warnings { get; }
 
+    /// <summary>True where the dictionary gives any endpoint a detection limit.</summary>
+    public bool HasDetectionLimits => _entries.Values.Any(entry => entry.DetectionLimit is not null);
+
     /// <summary>Reads the study's dictionary, if it names one.</summary>
     /// <exception cref="RefusalException">The dictionary has an unknown column, kind or transform, a number that is none, or an endpoint twice; names the line.</exception>
     public static EndpointCatalogue Read(StudyDefinition study) =>

@@ -1,0 +1,50 @@
+using MatchedSuite.Engine.Methods;
+using MatchedSuite.Engine.Rows;
+using MatchedSuite.Statistics;
+using MatchedSuite.Statistics.Pairs;
+using MatchedSuite.Statistics.Strata;
+using MatchedSuite.Study.Definition;
+
+namespace MatchedSuite.Engine.Evaluation;
+
+/// <summary>Compares one method's results between strata; one worker owns it and reuses it.</summary>
+internal sealed class StrataRows(int strata, TestOptions options)
+{
+    private readonly TestResult[] _results = new TestResult[strata];
+    private readonly PairedTable[] _tables = new PairedTable[strata];
+    private int _sets;
+    private int _samples;
+
+    /// <summary>Forgets the method before.</summary>
+    public void Clear()
+    {
+        _sets = 0;
+        _samples = 0;
+    }
+
+    /// <summary>Keeps one stratum's result.</summary>
+    public void Keep(short stratum, in TestResult result, in PairSample pairs, EndpointKind kind)
+    {
+        _results[stratum] = result;
+        if (kind == EndpointKind.Binary)
+            _tables[stratum] = PairedTable.Of(pairs);
+        _sets += result.Sets;
+        _samples += result.Samples;
+    }
+
+    /// <summary>Adds the row of the comparison.</summary>
+    public void AddRow(StrataComparison comparison, RecordBuffer<ResultRow> rows)
+    {
+        TestResult result = comparison switch
+        {
+            StrataComparison.Discordance when _results.Length == 2 => DiscordanceDifference.Run(_tables[0], _tables[1], options.Sides),
+            StrataComparison.Means => StratumDifference.OfMeans(_results, options),
+            _ => StratumDifference.OfEstimates(_results, options),
+        };
+        ref ResultRow row = ref rows.Add();
+        row.Stratum = ResultRow.BetweenStrata;
+        row.Take(result);
+        row.Sets = _sets;
+        row.Samples = _samples;
+    }
+}
