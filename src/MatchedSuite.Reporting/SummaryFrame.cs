@@ -2,6 +2,7 @@ using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Output;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Engine.Running;
+using MatchedSuite.Study.Definition;
 using Microsoft.Data.Analysis;
 
 namespace MatchedSuite.Reporting;
@@ -42,6 +43,12 @@ internal static class SummaryFrame
 
     private static string IntervalName(FinishedRun run) => $"{NumberText.Percent(run.Plan.Options.Confidence)} interval";
 
+    private static readonly Dictionary<EndpointKind, string> RatioNames = new()
+    {
+        [EndpointKind.Binary] = "odds ratio",
+        [EndpointKind.Count] = "rate ratio",
+    };
+
     // Logarithms are shown as the ratio they stand for.
     private static double Shown(SummaryRow row, double value)
     {
@@ -52,7 +59,7 @@ internal static class SummaryFrame
     private static string ScaleOf(SummaryRow row)
     {
         if ((LogBase)row.Row.LogBase != LogBase.None)
-            return row.Method.StartsWith("mcnemar", StringComparison.Ordinal) ? "odds ratio" : "ratio";
+            return RatioNames.GetValueOrDefault(row.Endpoint.Kind, "ratio");
         return row.Endpoint.Unit is { Length: > 0 } unit ? $"difference, {unit}" : "difference";
     }
 }

@@ -4,7 +4,7 @@ using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Demonstration;
 
-/// <summary>The invented twin study: pairs of twins of whom one works in glasshouses, 200 markers of mixed kinds.</summary>
+/// <summary>The invented twin study: pairs of twins of whom one works in glasshouses, 210 markers of mixed kinds.</summary>
 /// <remarks>
 /// Everything is invented. Markers of a family move together through a shared factor; twins share most of their level. Some
 /// effects are planted (<c>truth.csv</c> says which), some values are missing, and the sample sheet has the blemishes that
@@ -15,8 +15,11 @@ public static class TwinDemo
     private const int Pairs = 104;
     private const int Samples = 2 * Pairs;
     private const double MissingShare = 0.03;
+    private const double DetectionLimit = 9;
     private const long SheetStream = 1_000_000;
     private const long FactorStream = 2_000_000;
+    private static readonly string[] SheetColumns =
+        ["sample", "pair", "person", "glasshouse", "zygosity", "sex", "age", "bmi", "smoking", "months"];
 
     /// <summary>Writes samples, panel, dictionary, truth and the study file into a folder that exists.</summary>
     /// <returns>Path of the study file.</returns>
@@ -41,6 +44,8 @@ public static class TwinDemo
             $"sign-{i:00}", $"antibody {i:00} present", EndpointKind.Binary, "", Transform.None, "signs", i is 3 or 11 ? 1.1 : 0)),
         .. Range(12, i => new InventedMarker(
             $"score-{i:00}", $"symptom score {i:00}", EndpointKind.Ordinal, "", Transform.None, "symptoms", i is 6 ? 0.7 : 0)),
+        .. Range(10, i => new InventedMarker(
+            $"spells-{i:00}", $"spells of complaint {i:00}", EndpointKind.Count, "", Transform.None, "spells", i is 2 ? 0.9 : 0)),
     ];
 
     // Twelve proteins differ, some up and some down, from hardly to plainly visible.
@@ -57,8 +62,8 @@ public static class TwinDemo
 
     private static void WriteSheet(string path, InventedNumbers numbers)
     {
-        using var sink = new CsvTableSink(path, Texts("sample", "pair", "person", "glasshouse", "zygosity", "sex", "age"));
-        var batch = new TableBatch(Texts("sample", "pair", "person", "glasshouse", "zygosity", "sex", "age"), Samples + 1);
+        using var sink = new CsvTableSink(path, Texts(SheetColumns));
+        var batch = new TableBatch(Texts(SheetColumns), Samples + 1);
         for (int sample = 0; sample < Samples; sample++)
             AddSheetRow(batch, sample, SampleName(sample), numbers);
         AddSheetRow(batch, 20, SampleName(20) + "-again", numbers);
@@ -82,11 +87,18 @@ public static class TwinDemo
             pair % 5 < 2 ? "MZ" : "DZ",
             female ? "f" : "m",
             age.ToString(CultureInfo.InvariantCulture),
+            BodyMassIndex(sample, numbers),
+            numbers.Uniform(SheetStream + 3, sample) < 0.25 ? "yes" : "no",
+            (12 + (int)(24 * numbers.Uniform(SheetStream + 4, sample))).ToString(CultureInfo.InvariantCulture),
         ];
         for (int column = 0; column < cells.Length; column++)
             batch.Text(column)[batch.Rows] = cells[column];
         batch.Rows++;
     }
+
+    private static string? BodyMassIndex(int sample, InventedNumbers numbers) => sample == 150
+        ? null
+        : Rounded(25 + 3 * numbers.Normal(SheetStream + 5, sample / 2) + 1.5 * numbers.Normal(SheetStream + 6, sample));
 
     private static void WritePanel(string path, InventedMarker[] markers, InventedNumbers numbers)
     {
@@ -116,6 +128,7 @@ public static class TwinDemo
         return marker.Kind switch
         {
             EndpointKind.Binary => marker.Name == "sign-18" || latent < 0.4 ? "0" : "1",
+            EndpointKind.Count => Math.Max(0, (int)Math.Floor(Math.Exp(0.7 + 0.6 * latent))).ToString(CultureInfo.InvariantCulture),
             EndpointKind.Ordinal => Math.Clamp((int)Math.Floor(latent + 1.5), 0, 4).ToString(CultureInfo.InvariantCulture),
             _ when marker.Name == "prot-120" && sample is 14 or 87 => "0",
             _ => Rounded(marker.Transform == Transform.Log2 ? 12 * Math.Pow(2, 0.6 * latent) : 4 + 0.35 * latent),
@@ -136,8 +149,19 @@ public static class TwinDemo
         value.ToString("G4", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture).ToString(CultureInfo.InvariantCulture);
 
     private static void WriteDictionary(string path, InventedMarker[] markers) => WriteMarkers(
-        path, ["endpoint", "label", "kind", "unit", "transform", "family"], markers,
-        marker => [marker.Name, marker.Label, WrittenName.Of(marker.Kind), marker.Unit, WrittenName.Of(marker.Transform), marker.Family]);
+        path, ["endpoint", "label", "kind", "unit", "transform", "detection_limit", "family"], markers,
+        marker =>
+        [
+            marker.Name, marker.Label, WrittenName.Of(marker.Kind), marker.Unit, WrittenName.Of(marker.Transform), LimitOf(marker), marker.Family,
+        ]);
+
+    // A few proteins have a limit in the middle of their values, one a limit above most of them.
+    private static string LimitOf(InventedMarker marker) => marker.Name switch
+    {
+        "prot-012" or "prot-046" or "prot-081" => DetectionLimit.ToString(CultureInfo.InvariantCulture),
+        "prot-100" => (2 * DetectionLimit).ToString(CultureInfo.InvariantCulture),
+        _ => "",
+    };
 
     private static void WriteTruth(string path, InventedMarker[] markers) => WriteMarkers(
         path, ["endpoint", "planted_effect"], markers,
