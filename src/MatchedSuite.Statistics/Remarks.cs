@@ -69,8 +69,7 @@ public enum Remarks : long
 
     /// <summary>Fewer endpoints than the fit of the common variance needs; no test was made.</summary>
     TooFewEndpoints = 1 << 20,
-    TooFewEndpoints = 1 << 22,
 
     /// <summary>More than half of the endpoint's values lie below its detection limit.</summary>
-    MostlyBelowLimit = 1 << 23,
+    MostlyBelowLimit = 1 << 21,
 }

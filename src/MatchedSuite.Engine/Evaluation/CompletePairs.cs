@@ -2,6 +2,7 @@ using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Statistics;
 using MatchedSuite.Statistics.Pairs;
+using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Evaluation;
 
@@ -29,11 +30,11 @@ internal readonly ref struct CompletePairs
     /// <param name="sets">The sets of the stratum.</param>
     /// <param name="columns">What is known of each set.</param>
     /// <param name="covariates">Whether the pairs' covariates must be known.</param>
-    /// <param name="settings">What the study file decides.</param>
+    /// <param name="zeros">What the signed-rank test does with differences of zero.</param>
     /// <param name="frame">Working memory that outlives the pairs.</param>
     public static CompletePairs Of(
         ReadOnlySpan<double> index, ReadOnlySpan<double> reference, ReadOnlySpan<int> sets, PairColumns columns, CovariateUse covariates,
-        PairSettings settings, in Scratch.Frame frame)
+        ZeroRule zeros, in Scratch.Frame frame)
     {
         Span<int> used = frame.Integers(sets.Length);
         int count = 0;
@@ -51,7 +52,7 @@ internal readonly ref struct CompletePairs
         for (int column = 0; column < columns.Covariates.Length && !adjusting.IsEmpty; column++)
             Pick(columns.Covariates[column], used, adjusting.Slice(column * count, count));
         return new CompletePairs(
-            new PairInput(pairs, settings)
+            new PairInput(pairs, zeros)
             {
                 Covariates = adjusting,
                 Exposure = Optional(columns.Exposure, used, frame),

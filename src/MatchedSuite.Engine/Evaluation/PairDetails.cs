@@ -14,7 +14,7 @@ internal static class PairDetails
 {
     /// <summary>Adds what applies to the endpoint.</summary>
     public static void Add(
-        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, PairContrast places, EndpointInfo endpoint, StrataSets strata, AnalysisPlan plan, PairSettings settings,
+        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, PairContrast places, EndpointInfo endpoint, StrataSets strata, AnalysisPlan plan,
         RecordBuffer<DetailRow> details, Scratch scratch)
     {
         bool isTwins = endpoint.Kind == EndpointKind.Continuous && TwinStrata.Are(plan.Arrangement.Strata);
@@ -24,7 +24,7 @@ internal static class PairDetails
         {
             using Scratch.Frame frame = scratch.Open();
             CompletePairs pairs = CompletePairs.Of(
-                index, reference, strata.SetsOf(stratum), places.Columns, CovariateUse.Ignored, settings, frame);
+                index, reference, strata.SetsOf(stratum), places.Columns, CovariateUse.Ignored, plan.Study.Analysis.Zeros, frame);
             if (endpoint.Kind == EndpointKind.Binary && pairs.Count > 0)
                 AddRisks(PairedTable.Of(pairs.Input.Pairs), stratum, plan.Options, details);
             else if (isTwins && stratum != ResultRow.AllStrata)

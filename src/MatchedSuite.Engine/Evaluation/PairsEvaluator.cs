@@ -59,7 +59,7 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         int before = output.Rows.Count;
         foreach (PlannedMethod planned in _design.MethodsFor(endpoint.Kind))
             AddMethod(index, reference, places, planned, endpoint, output);
-        PairDetails.Add(index, reference, places, endpoint, _strata, Plan, _design.Settings, output.Details, Scratch);
+        PairDetails.Add(index, reference, places, endpoint, _strata, Plan, output.Details, Scratch);
         if (Plan.Study.Endpoints.PerStandardDeviation && endpoint.Kind == EndpointKind.Continuous)
             StandardScale.Apply(reference, output.Rows.Records[before..], Scratch);
         if (!above.IsEmpty)
@@ -87,7 +87,7 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         for (short stratum = ResultRow.AllStrata; stratum < _strata.Count; stratum++)
         {
             using Scratch.Frame frame = Scratch.Open();
-            CompletePairs pairs = CompletePairs.Of(index, reference, _strata.SetsOf(stratum), places.Columns, covariates, _design.Settings, frame);
+            CompletePairs pairs = CompletePairs.Of(index, reference, _strata.SetsOf(stratum), places.Columns, covariates, Plan.Study.Analysis.Zeros, frame);
             TestResult result = UntestedBefore(pairs.Designed, pairs.Count, 2 * pairs.Count) ?? planned.Method.Test(pairs.Input, Plan.Options, Scratch);
             ref ResultRow row = ref output.Rows.Add();
             row.Stratum = stratum;

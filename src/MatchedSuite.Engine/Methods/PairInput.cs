@@ -1,17 +1,18 @@
 using MatchedSuite.Statistics.Pairs;
+using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Methods;
 
 /// <summary>One endpoint on complete pairs with everything a pair method may ask for beside it.</summary>
 /// <param name="pairs">The endpoint.</param>
-/// <param name="settings">What the study file decides for all endpoints.</param>
-public readonly ref struct PairInput(PairSample pairs, PairSettings settings)
+/// <param name="zeros">What the signed-rank test does with differences of zero.</param>
+public readonly ref struct PairInput(PairSample pairs, ZeroRule zeros)
 {
     /// <summary>The endpoint.</summary>
     public PairSample Pairs { get; } = pairs;
 
-    /// <summary>What the study file decides for all endpoints.</summary>
-    public PairSettings Settings { get; } = settings;
+    /// <summary>What the signed-rank test does with differences of zero.</summary>
+    public ZeroRule Zeros { get; } = zeros;
 
     /// <summary>Within-pair differences of the covariates, column after column; empty where none are named.</summary>
     public ReadOnlySpan<double> Covariates { get; init; }

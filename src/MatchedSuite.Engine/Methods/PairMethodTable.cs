@@ -20,13 +20,13 @@ public static class PairMethodTable
         new(ModeratedFinish.Method, Continuous, EstimateScale.Analysis, StrataComparison.None, Plain(PairedT.Run)),
         new("signed-rank", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, SignedRanks),
         new("sign", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, Plain(SignTest.Run)),
-        new("sign-flip", Continuous, EstimateScale.Analysis, StrataComparison.Estimates, Flipped),
+        new("sign-flip", Continuous, EstimateScale.Analysis, StrataComparison.Estimates, Plain(SignFlipMean.Run)),
         new("trimmed-mean", Continuous, EstimateScale.Analysis, StrataComparison.Means, Plain(TrimmedMean.Run)),
         new("mcnemar-exact", Binary, EstimateScale.NaturalLog, StrataComparison.Discordance, Plain(McNemarExact.Run)),
         new("mcnemar-midp", Binary, EstimateScale.NaturalLog, StrataComparison.Discordance, Plain(McNemarMidP.Run)),
         new("mcnemar", Binary, EstimateScale.NaturalLog, StrataComparison.Discordance, Plain(McNemar.Run)),
         new("mcnemar-corrected", Binary, EstimateScale.NaturalLog, StrataComparison.Discordance, Plain(McNemarCorrected.Run)),
-        new("conditional-logistic", Binary, EstimateScale.NaturalLog, StrataComparison.Estimates, PairedOdds.Run) { Covariates = CovariateUse.Adjusted },
+        new("conditional-logistic", Binary, EstimateScale.NaturalLog, StrataComparison.Estimates, AdjustedOdds) { Covariates = CovariateUse.Adjusted },
         new("stuart-maxwell", Ordinal, EstimateScale.Analysis, StrataComparison.None, Plain(StuartMaxwell.Run)),
         new("bowker", Ordinal, EstimateScale.Analysis, StrataComparison.None, Plain(Bowker.Run)),
         new("paired-poisson", Count, EstimateScale.NaturalLog, StrataComparison.Estimates, Rates),
@@ -52,12 +52,12 @@ public static class PairMethodTable
             : AdjustedPairedT.Run(RegressionPairs.WithCovariates(input.Pairs, input.Covariates), options, scratch);
 
     private static TestResult SignedRanks(in PairInput input, TestOptions options, Scratch scratch) =>
-        input.Settings.Zeros == ZeroRule.Pratt
+        input.Zeros == ZeroRule.Pratt
             ? SignedRankPratt.Run(input.Pairs, options, scratch)
             : SignedRank.Run(input.Pairs, options, scratch);
 
-    private static TestResult Flipped(in PairInput input, TestOptions options, Scratch scratch) =>
-        SignFlipMean.Run(input.Pairs, input.Settings.Flips, options, scratch);
+    private static TestResult AdjustedOdds(in PairInput input, TestOptions options, Scratch scratch) =>
+        AdjustedOddsRatio.Run(RegressionPairs.WithCovariates(input.Pairs, input.Covariates), options, scratch);
 
     private static TestResult Rates(in PairInput input, TestOptions options, Scratch scratch) => PairedPoisson.Run(
         input.IndexTime.IsEmpty ? EventTotals.Of(input.Pairs) : EventTotals.Of(input.Pairs, input.IndexTime, input.ReferenceTime), options);

@@ -22,7 +22,13 @@ public sealed class AnalysisPlan
         Catalogue = inputs.Catalogue;
         Arrangement = inputs.Audit.Arrangement;
         SourceColumns = inputs.SourceColumns();
-        Options = new TestOptions { Sides = Study.Analysis.Sides, Confidence = Study.Analysis.Confidence };
+        Options = new TestOptions
+        {
+            Sides = Study.Analysis.Sides,
+            Confidence = Study.Analysis.Confidence,
+            Resamples = Study.Analysis.Resamples,
+            Seed = Study.Seed,
+        };
         Adjustments = [.. Study.Analysis.Adjust.Select(AdjustmentTable.Named)];
         _samples = inputs.Source.Samples;
         _design = DesignTable.Lay(inputs);

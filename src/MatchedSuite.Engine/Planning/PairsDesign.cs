@@ -30,7 +30,6 @@ public sealed class PairsDesign : IDesign
             of => of.Value.Select((name, position) => Planned(name, position == 0)).ToArray());
         if (inputs.Catalogue.HasDetectionLimits)
             AboveBelow = Planned(AboveBelowMethod, isPrimary: false);
-        Settings = PairSettings.Of(study);
         Warnings = [.. Comparisons[0].Columns.CollinearNames().Select(name =>
             $"covariate '{name}' is the same within every set or follows from the others; results are not adjusted for it")];
     }
@@ -46,9 +45,6 @@ public sealed class PairsDesign : IDesign
 
     /// <inheritdoc/>
     public IReadOnlyList<string> Warnings { get; }
-
-    /// <summary>What the study file decides for the methods of all endpoints.</summary>
-    public PairSettings Settings { get; }
 
     /// <summary>The method for values above and below a detection limit; null where no endpoint has one.</summary>
     public PlannedMethod? AboveBelow { get; }
