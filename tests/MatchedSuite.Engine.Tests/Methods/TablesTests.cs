@@ -1,5 +1,6 @@
 using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Output;
+using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics;
 using MatchedSuite.Study.Definition;
 
@@ -34,5 +35,12 @@ public class TablesTests
         string page = File.ReadAllText(Repository.Path("docs/results.md"));
         foreach (Remarks remark in Enum.GetValues<Remarks>().Where(remark => remark != Remarks.None))
             Assert.Contains($"| `{WrittenName.Of(remark)}` |", page, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void Every_quantity_of_the_details_is_described_in_the_page_on_results()
+    {
+        string page = File.ReadAllText(Repository.Path("docs/results.md"));
+        Assert.All(WrittenName.All<Quantity>(), name => Assert.Contains($"`{name}`", page, StringComparison.Ordinal));
     }
 }
