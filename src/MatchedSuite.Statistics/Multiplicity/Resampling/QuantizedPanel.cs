@@ -2,8 +2,8 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 
 /// <summary>Consecutive tiles of sixteen endpoints whose differences are whole numbers, so that their signed sums are exact in any order.</summary>
 /// <remarks>
-/// How differences become whole numbers stands with <see cref="WholeNumbers"/>. The places of the order fill the tiles from the end: a first tile that is not full repeats
-/// the least significant endpoint, which changes no maximum.
+/// How differences become whole numbers stands with <see cref="WholeNumbers"/>. The places of the order fill the tiles from the
+/// end: a first tile that is not full repeats the least significant endpoint, which changes no maximum.
 /// </remarks>
 internal sealed class QuantizedPanel
 {
