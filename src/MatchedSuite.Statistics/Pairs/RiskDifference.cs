@@ -1,4 +1,3 @@
-using MathNet.Numerics.RootFinding;
 using MatchedSuite.Statistics.Distributions;
 
 namespace MatchedSuite.Statistics.Pairs;
@@ -11,8 +10,6 @@ namespace MatchedSuite.Statistics.Pairs;
 public static class RiskDifference
 {
     // Brent's method stops when the root is known this closely; a proportion has no unit.
-    private const double Accuracy = 1e-16;
-    private const int MostSteps = 200;
     private const double SmallStep = 1e-14;
 
     /// <summary>(b − c)/n; NaN without pairs.</summary>
@@ -93,7 +90,23 @@ public static class RiskDifference
             return z == 0 ? estimate : 1;
         // Where all pairs are of one kind the score has no spread at the estimate itself; a step beyond it has.
         double from = Excess(estimate) < 0 ? estimate : estimate + SmallStep;
-        return Brent.FindRoot(Excess, from, 1, Accuracy, MostSteps);
+        return Halved(Excess, from, 1);
+    }
+
+    // Halves until the middle is one of the ends; the score rises through zero once between them.
+    private static double Halved(Func<double, double> rising, double low, double high)
+    {
+        double middle = low + ((high - low) / 2);
+        while (middle > low && middle < high)
+        {
+            if (rising(middle) < 0)
+                low = middle;
+            else
+                high = middle;
+            middle = low + ((high - low) / 2);
+        }
+
+        return middle;
     }
 
     // Most likely probability of a pair of the kind c where the difference of proportions is fixed.
