@@ -19,7 +19,8 @@ public enum Outcome
     TooManyMissing,
 
     /// <summary>
-    /// The covariates determine the endpoint within every set, or say the same as each other or the design: shares cannot be told apart.
+    /// The covariates determine the endpoint, or the roles, within every set, or say the same as each other or the design: shares
+    /// cannot be told apart.
     /// </summary>
     Collinear,
 

@@ -46,10 +46,10 @@ public enum Remarks : long
     /// <summary>A covariate is constant within every set or follows from the other covariates; it was left out.</summary>
     CollinearCovariate = 1 << 12,
 
-    /// <summary>The covariates determine the endpoint, or say the same as each other or the design; no test was made.</summary>
+    /// <summary>The covariates determine the endpoint or the roles, or say the same as each other or the design; no test was made.</summary>
     Collinear = 1 << 13,
 
-    /// <summary>The likelihood could not be maximised to the accuracy that is promised; no test was made.</summary>
+    /// <summary>The likelihood could not be maximised to the accuracy that is promised and no test was made, or an end of the interval was not found.</summary>
     NotConverged = 1 << 14,
 
     /// <summary>The null distribution was sampled by random relabelings or sign flips.</summary>

@@ -50,19 +50,16 @@ internal readonly ref struct ConditionalLikelihood
     /// role stands above one inside it, so that no finite maximum exists.
     /// </summary>
     /// <param name="direction">One entry a column.</param>
-    /// <param name="tolerance">Share of the largest lead up to which a member may stand above and still count as level.</param>
-    public bool NeverFallsAlong(ReadOnlySpan<double> direction, double tolerance)
+    /// <param name="tolerances">
+    /// One a column: two members count as level up to the sum of these times the sizes of their differences.
+    /// </param>
+    public bool NeverFallsAlong(ReadOnlySpan<double> direction, ReadOnlySpan<double> tolerances)
     {
-        var (lead, excess) = RangeAlong(direction);
-        return lead < 0 && excess <= -lead * tolerance;
-    }
-
-    /// <summary>Smallest and largest lead of members not chosen over chosen ones along a direction; 0 where all are level.</summary>
-    public (double Smallest, double Largest) RangeAlong(ReadOnlySpan<double> direction)
-    {
-        var singles = _tiles.RangeAlong(direction);
-        var subsets = _subsets.RangeAlong(direction);
-        return (Math.Min(singles.Smallest, subsets.Smallest), Math.Max(singles.Largest, subsets.Largest));
+        var singles = _tiles.LeadAlong(direction, tolerances);
+        if (!singles.NeverBehind)
+            return false;
+        var subsets = _subsets.LeadAlong(direction, tolerances);
+        return subsets.NeverBehind && (singles.SomewhereAhead || subsets.SomewhereAhead);
     }
 
     /// <summary>

@@ -8,9 +8,11 @@ internal ref struct ConditionalModel
     // A column's part in an endless direction, beside the largest part, from which its coefficient counts as infinite.
     private const double PartOfDirection = 1e-4;
 
+    // A standard error this many times the one without covariates says that nothing is known of the coefficient.
+    private const double LargestError = 1e4;
+
     private readonly ConditionalLikelihood _likelihood;
     private readonly Span<int> _free;
-    private readonly Span<double> _spreads;
     private readonly Span<double> _factor;
     private readonly Span<double> _work;
     private readonly int _covariates;
@@ -33,11 +35,8 @@ internal ref struct ConditionalModel
         _likelihood = ConditionalLikelihood.Of(sets, design, columns, frame);
         _factor = frame.Doubles(columns * columns);
         _work = frame.Doubles(columns);
-        _spreads = frame.Doubles(columns);
         _point = new ConditionalMaximum(columns, frame);
         _point.Evaluate(_likelihood);
-        for (int c = 0; c < columns; c++)
-            _spreads[c] = Math.Sqrt(_point.Information[(c * columns) + c]);
 
         Span<int> independent = frame.Integers(columns + 1);
         _free = independent[..Cholesky.Independent(_point.Information, columns, independent, _factor)];
@@ -62,11 +61,11 @@ internal ref struct ConditionalModel
             Remarks = collinear < 0 ? Remarks.None : Remarks.CollinearCovariate,
             NullLogLikelihood = _point.LogLikelihood,
             LogLikelihoodOfCovariates = _point.LogLikelihood,
-            OverallScore = Score(_free.Length),
         };
         if (Exposures == 0)
-            return fit with { Outcome = _spreads[_covariates..].ContainsAnyExcept(0) ? Outcome.Collinear : Outcome.NothingDiffers };
-        fit = fit with { Score = fit.OverallScore };
+            return fit with { Outcome = _point.Spreads[_covariates..].ContainsAnyExcept(0) ? Outcome.Collinear : Outcome.NothingDiffers };
+        ChiSquaredTest score = Score(_free.Length);
+        fit = fit with { Score = score, OverallScore = score };
         if (_adjusting > 0)
         {
             if (_point.Climb(_likelihood, _free[.._adjusting]) == Ascent.Lost)
@@ -80,6 +79,8 @@ internal ref struct ConditionalModel
             return fit with { Outcome = Outcome.NotConverged };
         double maximum = ascent == Ascent.Endless && _columns == 1 ? _likelihood.LimitAlong(_point.Step[0]) : _point.LogLikelihood;
         TakeCoefficients(ascent, coefficients, standardErrors);
+        if (ascent == Ascent.Endless && IsUndetermined(coefficients, standardErrors))
+            return fit with { Outcome = Outcome.Collinear };
         fit = fit with
         {
             LogLikelihood = maximum,
@@ -136,6 +137,18 @@ internal ref struct ConditionalModel
         return ChiSquaredTest.Of(Cholesky.WaldOfLast(_factor, _free.Length, tested), last);
     }
 
+    // Where covariates alone separate the roles, nothing may be left in the sets to tell an exposure's share by.
+    private readonly bool IsUndetermined(ReadOnlySpan<double> coefficients, ReadOnlySpan<double> standardErrors)
+    {
+        foreach (int c in _free[_adjusting..])
+        {
+            if (double.IsInfinity(coefficients[c]) || standardErrors[c] * _point.Spreads[c] <= LargestError)
+                return false;
+        }
+
+        return true;
+    }
+
     // Leaves the factor of the information at the maximum behind.
     private readonly void TakeCoefficients(Ascent ascent, Span<double> coefficients, Span<double> standardErrors)
     {
@@ -143,13 +156,13 @@ internal ref struct ConditionalModel
         standardErrors.Fill(double.NaN);
         double largest = 0;
         for (int c = 0; c < _columns; c++)
-            largest = Math.Max(largest, Math.Abs(_point.Step[c]) * _spreads[c]);
+            largest = Math.Max(largest, Math.Abs(_point.Step[c]) * _point.Spreads[c]);
         bool factored = Cholesky.TryFactor(_point.Information, _columns, _free, _factor);
         for (int i = 0; i < _free.Length; i++)
         {
             int c = _free[i];
             coefficients[c] = _point.Beta[c];
-            if (ascent == Ascent.Endless && Math.Abs(_point.Step[c]) * _spreads[c] > PartOfDirection * largest)
+            if (ascent == Ascent.Endless && Math.Abs(_point.Step[c]) * _point.Spreads[c] > PartOfDirection * largest)
             {
                 coefficients[c] = _point.Step[c] > 0 ? double.PositiveInfinity : double.NegativeInfinity;
                 continue;
@@ -179,9 +192,9 @@ internal ref struct ConditionalModel
             int exposure = _columns - 1;
             double level = fit.LogLikelihood - (quantile * quantile / 2);
             double start = double.IsFinite(estimate) ? estimate : 0;
-            double step = double.IsNaN(standardError) ? 1 / _spreads[exposure] : quantile * standardError;
-            low = double.IsNegativeInfinity(estimate) ? estimate : FindLimit(exposure, level, start - step);
-            high = double.IsPositiveInfinity(estimate) ? estimate : FindLimit(exposure, level, start + step);
+            double step = double.IsNaN(standardError) ? 1 / _point.Spreads[exposure] : quantile * standardError;
+            low = double.IsNegativeInfinity(estimate) ? estimate : FindLimit(exposure, level, start, -step);
+            high = double.IsPositiveInfinity(estimate) ? estimate : FindLimit(exposure, level, start, step);
         }
         else
         {
@@ -194,9 +207,10 @@ internal ref struct ConditionalModel
             Estimate = estimate,
             StandardError = standardError,
             Interval = Interval.Pointing(low, high, options.Sides),
+            Remarks = fit.Remarks | (double.IsNaN(low) || double.IsNaN(high) ? Remarks.NotConverged : Remarks.None),
         };
     }
 
-    private double FindLimit(int exposure, double level, double start) =>
-        ProfileLimit.Find(_likelihood, ref _point, _free[.._adjusting], exposure, level, start);
+    private double FindLimit(int exposure, double level, double from, double reach) =>
+        ProfileLimit.Find(_likelihood, ref _point, _free[.._adjusting], exposure, level, from, reach);
 }

@@ -82,24 +82,30 @@ internal readonly ref struct SingleChoiceTiles
         return new SingleChoiceTiles(tiles, setsByOthers, columns);
     }
 
-    /// <summary>Largest and smallest β·D over all members not chosen; both 0 where there are none.</summary>
-    public (double Smallest, double Largest) RangeAlong(ReadOnlySpan<double> direction)
+    /// <summary>Whether the chosen members lead along a direction; see <see cref="ConditionalLikelihood.NeverFallsAlong"/>.</summary>
+    public (bool NeverBehind, bool SomewhereAhead) LeadAlong(ReadOnlySpan<double> direction, ReadOnlySpan<double> tolerances)
     {
-        double smallest = 0, largest = 0;
+        bool ahead = false;
         int stride = Columns * Lanes;
         for (int at = 0; at < Tiles.Length; at += stride)
         {
             for (int lane = 0; lane < Lanes; lane++)
             {
-                double along = 0;
+                double along = 0, level = 0;
                 for (int c = 0; c < Columns; c++)
-                    along += direction[c] * Tiles[at + (c * Lanes) + lane];
-                smallest = Math.Min(smallest, along);
-                largest = Math.Max(largest, along);
+                {
+                    double difference = Tiles[at + (c * Lanes) + lane];
+                    along += direction[c] * difference;
+                    level += tolerances[c] * Math.Abs(difference);
+                }
+
+                if (along > level)
+                    return (false, ahead);
+                ahead |= along < -level;
             }
         }
 
-        return (smallest, largest);
+        return (true, ahead);
     }
 
     /// <summary>The log-likelihood of a single column at infinity; see <see cref="ConditionalLikelihood.LimitAlong"/>.</summary>

@@ -101,33 +101,32 @@ internal readonly ref struct SubsetChoices
         return logLikelihood;
     }
 
-    /// <summary>
-    /// Over all sets, the smallest and largest of (β·D of a member not chosen) − (β·D of the chosen member that has least);
-    /// the largest is at most 0 where the chosen members lead every set.
-    /// </summary>
-    public (double Smallest, double Largest) RangeAlong(ReadOnlySpan<double> direction)
+    /// <summary>Whether the chosen members lead along a direction; see <see cref="ConditionalLikelihood.NeverFallsAlong"/>.</summary>
+    public (bool NeverBehind, bool SomewhereAhead) LeadAlong(ReadOnlySpan<double> direction, ReadOnlySpan<double> tolerances)
     {
-        double smallest = 0, largest = 0;
+        bool somewhereAhead = false;
         for (int s = 0; s < _chosen.Length; s++)
         {
-            double least = double.PositiveInfinity;
-            for (int member = _starts[s]; member < _starts[s + 1]; member++)
+            for (int member = _starts[s] + _chosen[s]; member < _starts[s + 1]; member++)
             {
-                double along = 0;
-                for (int c = 0; c < _columns; c++)
-                    along += direction[c] * _differences[(member * _columns) + c];
-                if (member < _starts[s] + _chosen[s])
+                for (int chosen = _starts[s]; chosen < _starts[s] + _chosen[s]; chosen++)
                 {
-                    least = Math.Min(least, along);
-                    continue;
-                }
+                    double along = 0, level = 0;
+                    for (int c = 0; c < _columns; c++)
+                    {
+                        double difference = _differences[(member * _columns) + c] - _differences[(chosen * _columns) + c];
+                        along += direction[c] * difference;
+                        level += tolerances[c] * Math.Abs(difference);
+                    }
 
-                smallest = Math.Min(smallest, along - least);
-                largest = Math.Max(largest, along - least);
+                    if (along > level)
+                        return (false, somewhereAhead);
+                    somewhereAhead |= along < -level;
+                }
             }
         }
 
-        return (smallest, largest);
+        return (true, somewhereAhead);
     }
 
     /// <summary>The log-likelihood of a single column at infinity; see <see cref="ConditionalLikelihood.LimitAlong"/>.</summary>

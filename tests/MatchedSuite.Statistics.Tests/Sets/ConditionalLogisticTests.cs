@@ -120,4 +120,15 @@ public class ConditionalLogisticTests
                 Assert.Equal(3.841458820694124, fallen, 1e-8); // square of the normal quantile 1.959963984540054
             }
         });
+
+    [Fact]
+    public void What_cannot_be_tested_says_why()
+    {
+        var level = new DrawnSets([3, 3, 3, 5, 5], [0, 3, 5], [true, false, false, true, false], []);
+        TestResult result = level.Run(ConditionalLogistic.Run);
+        Assert.Equal((Outcome.NothingDiffers, Remarks.NothingDiffers), (result.Outcome, result.Remarks));
+        Assert.Equal((2, 5), (result.Sets, result.Samples));
+        Assert.Equal(Outcome.NothingDiffers, (level with { Covariates = [1, 4, 2, 3, 6] }).Run(ConditionalLogistic.Run).Outcome);
+        Assert.Equal(Outcome.TooFewSets, new DrawnSets([3, 4], [0, 2], [true, true], []).Run(ConditionalLogistic.Run).Outcome);
+    }
 }
