@@ -9,7 +9,7 @@ namespace MatchedSuite.Statistics.Pairs;
 /// </remarks>
 public static class RiskDifference
 {
-    // Brent's method stops when the root is known this closely; a proportion has no unit.
+    // Where the score has no spread at the estimate, so far beyond it the search begins; a proportion has no unit.
     private const double SmallStep = 1e-14;
 
     /// <summary>(b − c)/n; NaN without pairs.</summary>
