@@ -59,6 +59,23 @@ public class StratumDifferenceTests
         Assert.Equal(2 * Math.Min(greater, less), DiscordanceDifference.Run(first, second, Sides.Two).P.Value, tolerance: 1e-12);
     }
 
+    [Fact]
+    public void The_page_on_strata_shows_what_is_computed()
+    {
+        TestResult control = Treated("Cont", TestOptions.Default), family = Treated("FT", TestOptions.Default);
+        var two = StratumDifference.OfMeans([family, control], TestOptions.Default);
+        var normal = StratumDifference.OfEstimates([family, control], TestOptions.Default);
+        var three = StratumDifference.OfMeans([Treated("CBT", TestOptions.Default), control, family], TestOptions.Default);
+        var exact = DiscordanceDifference.Run(new PairedTable(0, 15, 7, 0), new PairedTable(0, 29, 3, 0), Sides.Two);
+        var page = MethodPage.Of("strata");
+        page.Shows("two strata: difference, interval", $"{two.Estimate}, {two.Interval.Low} to {two.Interval.High}");
+        page.Shows("two strata: t, df, p", $"{two.Statistic}, {two.DegreesOfFreedom}, {two.P.Value}");
+        page.Shows("the same by standard errors alone: z, p", $"{normal.Statistic}, {normal.P.Value}");
+        page.Shows("three strata: F, df, df2, p",
+            $"{three.Statistic}, {three.DegreesOfFreedom}, {three.DenominatorDegreesOfFreedom}, {three.P.Value}");
+        page.Shows("discordant pairs: difference of log odds, p", $"{exact.Estimate}, {exact.P.Value}");
+    }
+
     private static TestResult Treated(string treatment, TestOptions options)
     {
         var table = Expected.Table("anorexia");

@@ -179,6 +179,8 @@ public class PairLawsTests
             var swapped = Run(method, [.. pairs.Select(p => (p.Reference, p.Index))], opposite);
             Assert.Equal(plain.Outcome, swapped.Outcome);
             Assert.Equal(plain.Remarks, swapped.Remarks);
+            if (IsUndetermined(plain))
+                return;
             Near(plain.P.Value, swapped.P.Value);
             Near(plain.P.Log10, swapped.P.Log10);
             Near(plain.SmallestPossibleP.Log10, swapped.SmallestPossibleP.Log10);
@@ -202,18 +204,22 @@ public class PairLawsTests
             Near(Math.Log10(result.P.Value), result.P.Log10);
             Assert.True(result.SmallestPossibleP.IsMissing || result.P.Log10 >= result.SmallestPossibleP.Log10 - 1e-12);
             // Limits from random flips are order statistics; near a confidence of one half chance may put them on the other side.
-            // Where a covariate separates the pairs, the likelihood is flat in the odds ratio and its estimate is any number.
-            if ((result.Remarks.HasFlag(Remarks.Resampled) && options.Confidence < 0.65) || result.Remarks.HasFlag(Remarks.Separated))
+            if ((result.Remarks.HasFlag(Remarks.Resampled) && options.Confidence < 0.65) || IsUndetermined(result))
                 return;
+            // A limit may be the estimate itself, each with its own rounding.
+            double rounding = 1e-14 * pairs.Max(p => Math.Max(Math.Abs(p.Index), Math.Abs(p.Reference)));
             if (options.Sides != Sides.Greater)
-                Assert.True(result.Interval.High >= result.Estimate);
+                Assert.True(result.Interval.High >= result.Estimate - rounding, $"{result}");
             else
                 Assert.Equal(double.PositiveInfinity, result.Interval.High);
             if (options.Sides != Sides.Less)
-                Assert.True(result.Interval.Low <= result.Estimate);
+                Assert.True(result.Interval.Low <= result.Estimate + rounding, $"{result}");
             else
                 Assert.Equal(double.NegativeInfinity, result.Interval.Low);
         });
+
+    // Where a covariate separates the pairs, the likelihood is flat in the odds ratio and its estimate is any number.
+    private static bool IsUndetermined(in TestResult result) => result.Remarks.HasFlag(Remarks.Separated);
 
     private static TestResult Run(PairMethod method, (double Index, double Reference)[] pairs, TestOptions options) =>
         method([.. pairs.Select(p => p.Index)], [.. pairs.Select(p => p.Reference)], options);
