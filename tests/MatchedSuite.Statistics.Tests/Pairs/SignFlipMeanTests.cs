@@ -36,6 +36,27 @@ public class SignFlipMeanTests
                 result.Interval.High, tolerance: 1e-14);
         });
 
+    [Theory]
+    [InlineData(12, 0.0)]
+    [InlineData(13, 0.4)]
+    [InlineData(14, -7.0)]
+    [InlineData(15, 1e3)]
+    public void The_limits_of_thousands_of_flips_are_the_means_of_the_right_rank_at_every_confidence(int n, double centre)
+    {
+        double[] differences = [.. Enumerable.Range(0, n).Select(i => centre + Math.Tan(1 + (2.7 * i)))];
+        double[] means = [.. Enumerable.Range(1, (1 << n) - 1).Select(flip =>
+            differences.Where((_, set) => (flip >> set & 1) == 1).Sum() / int.PopCount(flip)).Order()];
+        double size = differences.Max(Math.Abs);
+        for (int percent = 1; percent < 100; percent += 7)
+        {
+            var options = new TestOptions { Confidence = percent / 100.0 };
+            var interval = Run(differences, options).Interval;
+            int rank = (int)Math.Ceiling(options.TailShare * (1 << n)) - 1;
+            Assert.Equal(means[rank - 1], interval.Low, tolerance: 1e-14 * size);
+            Assert.Equal(means[^rank], interval.High, tolerance: 1e-14 * size);
+        }
+    }
+
     [Fact]
     public void Random_flips_equal_the_plain_walk_through_their_bits() =>
         Gen.Select(Gen.Int[-50, 60].Array[21, 150], Gen.Long[0, 1000], AnyOptions).Sample((tenths, seed, any) =>
