@@ -29,4 +29,7 @@ public enum Outcome
 
     /// <summary>Fewer endpoints than the method needs to learn what they have in common.</summary>
     TooFewEndpoints,
+
+    /// <summary>More distinct codes than an ordinal endpoint may have: it is measured, not graded.</summary>
+    TooManyCategories,
 }

@@ -72,4 +72,7 @@ public enum Remarks : long
 
     /// <summary>More than half of the endpoint's values lie below its detection limit.</summary>
     MostlyBelowLimit = 1 << 21,
+
+    /// <summary>More distinct codes than an ordinal endpoint may have; no test was made.</summary>
+    TooManyCategories = 1 << 22,
 }

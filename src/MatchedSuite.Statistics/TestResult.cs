@@ -55,6 +55,7 @@ public readonly record struct TestResult()
         Outcome.Collinear => Remarks.Collinear,
         Outcome.NotConverged => Remarks.NotConverged,
         Outcome.TooFewEndpoints => Remarks.TooFewEndpoints,
+        Outcome.TooManyCategories => Remarks.TooManyCategories,
         _ => Remarks.None,
     };
 }

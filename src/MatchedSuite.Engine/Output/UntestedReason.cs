@@ -16,6 +16,10 @@ public static class UntestedReason
             CultureInfo.InvariantCulture, $"a larger share of sets lacks a value than gates.missing-at-most ({study.Gates.MissingAtMost:P0}) allows"),
         Outcome.NoVariation => "every difference is the same, so there is no spread to judge its mean by",
         Outcome.NothingDiffers => "no set differs between the roles, so nothing points in a direction",
-        _ => "",
+        Outcome.Collinear => "the covariates determine the endpoint or the comparison within every set",
+        Outcome.NotConverged => "the likelihood could not be maximised to the accuracy that is promised",
+        Outcome.TooFewEndpoints => "the family has too few endpoints to learn a common variance from",
+        Outcome.TooManyCategories => "the endpoint has more than 100 distinct codes; give it the kind 'continuous'",
+        _ => throw new ArgumentOutOfRangeException(nameof(outcome), outcome, "A tested row has no reason not to be."),
     };
 }

@@ -16,8 +16,10 @@ public static class Bowker
     /// <param name="pairs">The complete pairs; at least one must differ.</param>
     /// <param name="options">Confidence is not used; sides other than two are remarked.</param>
     /// <param name="scratch">Working memory of the calling thread.</param>
-    /// <returns><see cref="Outcome.TooFewSets"/> without pairs, <see cref="Outcome.NothingDiffers"/> where no pair differs.</returns>
-    /// <exception cref="ArgumentException">There are more than 100 distinct codes.</exception>
+    /// <returns>
+    /// <see cref="Outcome.TooFewSets"/> without pairs, <see cref="Outcome.NothingDiffers"/> where no pair differs,
+    /// <see cref="Outcome.TooManyCategories"/> with more than 100 distinct codes.
+    /// </returns>
     public static TestResult Run(in PairSample pairs, TestOptions options, Scratch scratch)
     {
         int n = pairs.Count;
@@ -25,6 +27,8 @@ public static class Bowker
             return TestResult.Untested(Outcome.TooFewSets, 0, 0);
         using var frame = scratch.Open();
         var table = SquareTable.Of(pairs, frame);
+        if (table.IsTooLarge)
+            return TestResult.Untested(Outcome.TooManyCategories, n, 2 * n);
         double statistic = 0;
         int df = 0;
         for (int i = 0; i < table.Categories; i++)

@@ -14,6 +14,9 @@ internal readonly ref struct SquareTable
         _counts = counts;
     }
 
+    /// <summary>True where there are too many codes for a table; then nothing was counted.</summary>
+    public bool IsTooLarge => Categories > MostCategories;
+
     /// <summary>k: number of distinct codes that occur in either role.</summary>
     public int Categories { get; }
 
@@ -23,7 +26,6 @@ internal readonly ref struct SquareTable
     /// <summary>Counts the pairs of an endpoint.</summary>
     /// <param name="pairs">At least one pair.</param>
     /// <param name="frame">Working memory that outlives the table.</param>
-    /// <exception cref="ArgumentException">There are more than <see cref="MostCategories"/> distinct codes.</exception>
     public static SquareTable Of(in PairSample pairs, in Scratch.Frame frame)
     {
         Span<double> codes = frame.Doubles(2 * pairs.Count);
@@ -38,7 +40,7 @@ internal readonly ref struct SquareTable
         }
 
         if (categories > MostCategories)
-            throw new ArgumentException($"An ordinal endpoint has {categories} distinct codes; expected at most {MostCategories}.");
+            return new SquareTable(categories, []);
         Span<int> counts = frame.Integers(categories * categories);
         counts.Clear();
         ReadOnlySpan<double> distinct = codes[..categories];

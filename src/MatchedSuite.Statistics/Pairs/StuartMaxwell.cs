@@ -25,6 +25,8 @@ public static class StuartMaxwell
             return TestResult.Untested(Outcome.TooFewSets, 0, 0);
         using var frame = scratch.Open();
         var table = SquareTable.Of(pairs, frame);
+        if (table.IsTooLarge)
+            return TestResult.Untested(Outcome.TooManyCategories, n, 2 * n);
         int k = table.Categories;
         Span<double> differences = frame.Doubles(k);
         Span<double> covariance = frame.Doubles(k * k);
