@@ -26,7 +26,7 @@ demo: $(MATCHED) ## writes and analyses the invented demo study; results in arti
 test: $(MATCHED) ## every test: units, values from outside, the built executable
 	$(DOTNET) test $(SOLUTION) -c $(CONFIGURATION) -v quiet --logger 'console;verbosity=minimal'
 
-bench: $(MATCHED) ## whole-process ratios against short scripts on general-purpose libraries, then the hot paths
+bench: $(MATCHED) ## ratios against short scripts on general-purpose libraries, then the hot paths
 	tests/MatchedSuite.Benchmarks/compare.sh $(MATCHED)
 	$(DOTNET) run --project tests/MatchedSuite.Benchmarks -c $(CONFIGURATION) -- --filter '*'
 

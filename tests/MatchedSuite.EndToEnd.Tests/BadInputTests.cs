@@ -41,6 +41,7 @@ public class BadInputTests
         ["wrong encoding"] = (f => File.WriteAllBytes(f.At("panel.csv"), Encoding.Latin1.GetBytes(f.Read("panel.csv").Replace("il6", "il6µ", StringComparison.Ordinal))), ["panel.csv", "line 3", "UTF-8"]),
         ["no endpoint left"] = (f => f.Change("study.yaml", "analysis:", "endpoints: {exclude: [\"*\"]}\nanalysis:"), ["panel.csv"]),
         ["binary value out of kind"] = (f => f.Change("study.yaml", "analysis:", "endpoints: {kind: binary}\nanalysis:"), ["panel.csv", "crp", "binary"]),
+        ["value too large to be squared"] = (f => f.Change("panel.csv", "il6,5,4.1", "il6,5,-4e200"), ["panel.csv", "il6", "s1b", "1e100"]),
         ["unclosed quote"] = (f => f.Change("panel.csv", "il6,", "\"il6,"), ["panel.csv"]),
         ["parquet cut short"] = (f => { f.Change("study.yaml", "panel.csv", "panel.parquet"); File.WriteAllText(f.At("panel.parquet"), "PAR1 and then nothing"); }, ["panel.parquet", "Parquet"]),
     };

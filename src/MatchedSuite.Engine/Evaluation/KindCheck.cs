@@ -6,14 +6,15 @@ using MatchedSuite.Study.Endpoints;
 
 namespace MatchedSuite.Engine.Evaluation;
 
-/// <summary>Refuses values that an endpoint of its kind cannot have.</summary>
+/// <summary>Refuses values that an endpoint of its kind cannot have, or that leave the range of doubles once they are squared and summed.</summary>
 internal static class KindCheck
 {
+    private const double LargestSize = 1e100;
+    private const double LargestCount = 1e9;
+
     /// <summary>Checks one endpoint's values, in the order of the arrangement's rows.</summary>
     public static void Run(ReadOnlySpan<double> values, EndpointInfo endpoint, AnalysisPlan plan)
     {
-        if (endpoint.Kind is EndpointKind.Continuous or EndpointKind.Ordinal)
-            return;
         for (int i = 0; i < values.Length; i++)
         {
             if (!double.IsNaN(values[i]) && !Fits(values[i], endpoint.Kind))
@@ -24,7 +25,8 @@ internal static class KindCheck
     private static bool Fits(double value, EndpointKind kind) => kind switch
     {
         EndpointKind.Binary => value is 0 or 1,
-        _ => value >= 0 && value == Math.Floor(value),
+        EndpointKind.Count => value is >= 0 and <= LargestCount && value == Math.Floor(value),
+        _ => Math.Abs(value) <= LargestSize,
     };
 
     private static RefusalException Refusal(double value, EndpointInfo endpoint, string sample, string file) => new(
@@ -33,7 +35,8 @@ internal static class KindCheck
         endpoint.Kind switch
         {
             EndpointKind.Binary => "0 (no), 1 (yes) or a missing mark",
-            _ => "a whole number of events, 0 or more, or a missing mark",
+            EndpointKind.Count => "a whole number of events from 0 to 1e9, or a missing mark",
+            _ => "a number between -1e100 and 1e100, or a missing mark",
         },
-        "Correct the value, or give the endpoint another kind in the dictionary or in endpoints.kind.");
+        "Correct the value, change its unit, or give the endpoint another kind in the dictionary or in endpoints.kind.");
 }
