@@ -10,7 +10,7 @@ public class RecordStore<T> : IDisposable
     where T : unmanaged
 {
     private static readonly int RecordBytes = Unsafe.SizeOf<T>();
-    private readonly T[] _page = new T[4096];
+    private const int PageRecords = 4096;
     private readonly SafeFileHandle _file;
     private readonly string _path;
 
@@ -62,9 +62,10 @@ public class RecordStore<T> : IDisposable
     /// <summary>Hands every record to <paramref name="visit"/>, in order, with its position.</summary>
     public void Scan(RecordVisitor<T> visit)
     {
-        for (int first = 0; first < Count; first += _page.Length)
+        var page = new T[Math.Min(Count, PageRecords)];
+        for (int first = 0; first < Count; first += page.Length)
         {
-            Span<T> records = _page.AsSpan(0, Math.Min(_page.Length, Count - first));
+            Span<T> records = page.AsSpan(0, Math.Min(page.Length, Count - first));
             Read(first, records);
             for (int i = 0; i < records.Length; i++)
                 visit(first + i, in records[i]);

@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using System.Runtime.Intrinsics;
 
 namespace MatchedSuite.Statistics.Pairs;
@@ -7,7 +8,10 @@ namespace MatchedSuite.Statistics.Pairs;
 /// The sums h(i) + h(j), i ≤ j, of ascending values h, or a(i) + b(j) of two ascending columns, as rows of an ascending matrix,
 /// and in each row the columns that are still candidates; a value cuts them along a staircase.
 /// </summary>
-/// <remarks>Each walk costs O(rows + columns passed), at most O(n), whatever the value.</remarks>
+/// <remarks>
+/// Each walk costs O(rows + columns passed), at most O(n), whatever the value. The walks by four neighbours are compiled with all
+/// optimisations at their first call: code compiled ahead leaves such comparisons out, and a short run would spend itself in them.
+/// </remarks>
 internal readonly ref struct PairwiseSumStaircase
 {
     // Infinities before and after the values, so that four neighbours can always be read at once.
@@ -118,6 +122,7 @@ internal readonly ref struct PairwiseSumStaircase
     }
 
     // A few columns right of the left bounds: four at a time and without a branch; where that is not enough, from the row below.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void UpFromLeft(double value, int first, int end)
     {
         var values = Vector256.Create(value);
@@ -140,6 +145,7 @@ internal readonly ref struct PairwiseSumStaircase
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void DownFromRight(double value, int first, int end)
     {
         var values = Vector256.Create(value);
