@@ -38,6 +38,9 @@ internal sealed class ChunkReader : IDisposable
     /// <summary>A cell of the piece, unquoted and trimmed; valid until the next move.</summary>
     public ReadOnlySpan<char> this[int cell] => Trimmed(_rows.Current[cell].Span);
 
+    /// <summary>A cell of the piece, unquoted and with its blanks; valid until the next move.</summary>
+    public ReadOnlySpan<char> Verbatim(int cell) => _rows!.Current[cell].Span;
+
     /// <summary>Goes to the next piece; false at the end of the chunk.</summary>
     public bool MoveNext()
     {

@@ -4,12 +4,14 @@ namespace MatchedSuite.Storage.Values;
 
 /// <summary>Room on disk for values that do not fit in memory, gone when disposed or when the process ends.</summary>
 /// <remarks>Several threads may read and write it at once.</remarks>
-internal sealed class ScratchFile : IDisposable
+public sealed class ScratchFile : IDisposable
 {
     private readonly string _path;
     private readonly SafeFileHandle _handle;
 
     /// <summary>Reserves the room at once, so that a full disk shows before hours of work.</summary>
+    /// <param name="folder">Folder of the file.</param>
+    /// <param name="bytes">Bytes to reserve; 0 where it is not known how many there will be.</param>
     /// <exception cref="IOException">The folder has no room or may not be written; the message names it.</exception>
     public ScratchFile(string folder, long bytes)
     {
@@ -29,6 +31,8 @@ internal sealed class ScratchFile : IDisposable
         }
     }
 
+    /// <summary>Writes bytes from the offset on.</summary>
+    /// <exception cref="IOException">The disk is full; the message names the file.</exception>
     public void Write(long offset, ReadOnlySpan<byte> bytes)
     {
         try
@@ -53,5 +57,6 @@ internal sealed class ScratchFile : IDisposable
         }
     }
 
+    /// <summary>Closes the file, which is then gone.</summary>
     public void Dispose() => _handle.Dispose();
 }
