@@ -14,7 +14,7 @@ public class RunFolderTests
         string[] files = [.. Directory.EnumerateFiles(folder.At("results"), "*", SearchOption.AllDirectories)
             .Select(path => Path.GetRelativePath(folder.At("results"), path).Replace('\\', '/')).Order(StringComparer.Ordinal)];
         Assert.Equal(
-            ["audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv", "results.csv", "results.parquet", "run.json", "summary.csv", "summary.md"],
+            ["audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv", "discoveries.csv", "families.csv", "results.csv", "results.parquet", "run.json", "summary.csv", "summary.md"],
             files);
         Assert.Equal(["panel.csv", "results", "samples.csv", "study.yaml"], Entries(folder));
     }

@@ -7,7 +7,7 @@ namespace MatchedSuite.EndToEnd.Tests;
 /// <summary>The same inputs, study file, seed and version give the same bytes, however the work is divided.</summary>
 public class SameBytesTests
 {
-    private static readonly string[] Written = ["results.parquet", "results.csv", "summary.csv", "summary.md", "audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv"];
+    private static readonly string[] Written = ["results.parquet", "results.csv", "summary.csv", "summary.md", "discoveries.csv", "families.csv", "audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv"];
 
     [Fact]
     public void Threads_and_block_sizes_change_no_byte()
@@ -41,7 +41,7 @@ public class SameBytesTests
         foreach (JsonElement input in manifest.RootElement.GetProperty("inputs").EnumerateArray())
             Assert.Equal(Sha256(folder.At(input.GetProperty("file").GetString()!)), input.GetProperty("sha256").GetString());
         JsonElement[] outputs = [.. manifest.RootElement.GetProperty("outputs").EnumerateArray()];
-        Assert.Equal(7, outputs.Length);
+        Assert.Equal(9, outputs.Length);
         foreach (JsonElement output in outputs)
             Assert.Equal(Sha256(folder.At($"results/{output.GetProperty("file").GetString()}")), output.GetProperty("sha256").GetString());
     }

@@ -1,102 +1,93 @@
 using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Planning;
-using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics;
+using MatchedSuite.Statistics.Multiplicity;
 using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Adjusting;
 
-/// <summary>Adjusts all p-values of a run once the last one is known.</summary>
-internal static class RowAdjuster
+/// <summary>Adjusts all p-values of a run once the last one is known, group by group.</summary>
+internal sealed class RowAdjuster
 {
-    /// <summary>Adjusts the rows of a store, group by group.</summary>
-    /// <param name="rows">Every row of the run.</param>
-    /// <param name="plan">Which adjustments and which family rule.</param>
-    /// <param name="family">Name of an endpoint's family, by its position.</param>
-    public static AdjustedColumns Run(RowStore rows, AnalysisPlan plan, Func<int, string> family)
+    private readonly AnalysisPlan _plan;
+    private readonly HypothesisTable _table;
+    private readonly EndpointTraits _traits;
+
+    /// <summary>An adjuster over the rows of a run.</summary>
+    public RowAdjuster(AnalysisPlan plan, HypothesisTable table, EndpointTraits traits)
     {
-        var p = new Probability[rows.Count];
-        var groupOfRow = new int[rows.Count];
-        List<HypothesisGroup> groups = Collect(rows, plan, family, p, groupOfRow);
-        int[][] members = Members(groups.Count, p, groupOfRow);
-        var columns = new Probability[plan.Adjustments.Count][];
-        for (int adjustment = 0; adjustment < columns.Length; adjustment++)
-        {
-            columns[adjustment] = new Probability[rows.Count];
-            Array.Fill(columns[adjustment], Probability.Missing);
-        }
-
-        for (int group = 0; group < groups.Count; group++)
-        {
-            groups[group].Hypotheses = members[group].Length;
-            groups[group].Rejected = AdjustGroup(members[group], p, plan, columns);
-        }
-
-        return new AdjustedColumns(columns, groups);
+        _plan = plan;
+        _table = table;
+        _traits = traits;
+        Columns = new AdjustedColumns(plan.Adjustments.Count, table.P.Length, plan.Study.Analysis.Intervals, table.Groups);
     }
 
-    private static List<HypothesisGroup> Collect(
-        RowStore rows, AnalysisPlan plan, Func<int, string> family, Probability[] p, int[] groupOfRow)
-    {
-        bool byFamily = plan.Study.Analysis.Family != FamilyRule.All;
-        var groups = new List<HypothesisGroup>();
-        var known = new Dictionary<HypothesisGroup, int>();
-        rows.Scan((int position, in ResultRow row) =>
-        {
-            short method = row.Primary == 1 ? HypothesisGroup.PrimaryMethods : row.Method;
-            var key = new HypothesisGroup(row.Contrast, row.Stratum, method, byFamily ? family(row.Endpoint) : null);
-            if (!known.TryGetValue(key, out int group))
-            {
-                group = groups.Count;
-                known.Add(key, group);
-                groups.Add(key with { });
-            }
+    /// <summary>The adjusted p-values so far.</summary>
+    public AdjustedColumns Columns { get; }
 
-            groupOfRow[position] = group;
-            p[position] = row.P;
-        });
-        return groups;
+    /// <summary>Runs every adjustment that needs nothing but p-values.</summary>
+    public void AdjustByP()
+    {
+        for (int group = 0; group < _table.Groups.Count; group++)
+            AdjustByP(_table.Groups[group], _table.Members(group));
     }
 
-    private static int[][] Members(int groups, Probability[] p, int[] groupOfRow)
+    /// <summary>Runs every adjustment by sign flips; it covers the primary rows.</summary>
+    /// <param name="store">The differences of all endpoints.</param>
+    /// <param name="threads">Threads to use; the results do not depend on them.</param>
+    /// <param name="memory">Bytes to use; the results do not depend on them.</param>
+    /// <param name="cancellation">Ends the run.</param>
+    public void AdjustByFlips(DifferenceStore store, int threads, long memory, CancellationToken cancellation)
     {
-        var sizes = new int[groups];
-        for (int row = 0; row < p.Length; row++)
+        for (int number = 0; number < _table.Groups.Count; number++)
         {
-            if (!p[row].IsMissing)
-                sizes[groupOfRow[row]]++;
+            HypothesisGroup group = _table.Groups[number];
+            if (group.Method != HypothesisGroup.PrimaryMethods || _plan.Flips!.Section(group.Contrast, group.Stratum) is not { } section)
+                continue;
+            var flips = new FlipAdjuster(_plan, group, _table.Members(number), _table, Columns);
+            flips.Run(store, section, threads, memory, cancellation);
         }
-
-        int[][] members = [.. sizes.Select(size => new int[size])];
-        Array.Clear(sizes);
-        for (int row = 0; row < p.Length; row++)
-        {
-            if (!p[row].IsMissing)
-                members[groupOfRow[row]][sizes[groupOfRow[row]]++] = row;
-        }
-
-        return members;
     }
 
-    private static int[] AdjustGroup(int[] members, Probability[] p, AnalysisPlan plan, Probability[][] columns)
+    private void AdjustByP(HypothesisGroup group, int[] members)
     {
-        var raw = new Probability[members.Length];
+        Probability[] p = Array.ConvertAll(members, row => _table.P[row]);
+        double[] weights = Array.ConvertAll(members, row => _traits.Weight(_table.Endpoints[row]));
+        var families = new Families(FamilyNumbers.Of(members.Select(row => _traits.Family(_table.Endpoints[row]))));
+        var hypotheses = new Hypotheses { P = p, Weights = weights, Families = families };
         var adjusted = new Probability[members.Length];
-        var rejected = new int[columns.Length];
-        for (int i = 0; i < members.Length; i++)
-            raw[i] = p[members[i]];
-        for (int adjustment = 0; adjustment < columns.Length; adjustment++)
+        group.Hypotheses = members.Length;
+        group.TrueNullShare = StoreyPi0.AtFixed(p);
+        group.SimesP = Simes.Global(p);
+        group.Rejected = new int?[_plan.Adjustments.Count];
+        for (int adjustment = 0; adjustment < _plan.Adjustments.Count; adjustment++)
         {
-            Adjustment rule = plan.Adjustments[adjustment];
-            rule.Procedure(raw, adjusted);
+            if (_plan.Adjustments[adjustment] is not PValueAdjustment rule)
+                continue;
+            ProcedureOf(rule)(hypotheses, adjusted);
+            double level = _plan.LevelOf(rule);
             for (int i = 0; i < members.Length; i++)
-            {
-                columns[adjustment][members[i]] = adjusted[i];
-                if (adjusted[i].IsAtMost(plan.LevelOf(rule)))
-                    rejected[adjustment]++;
-            }
+                Columns.Set(adjustment, members[i], adjusted[i]);
+            group.Rejected[adjustment] = adjusted.Count(value => value.IsAtMost(level));
         }
 
-        return rejected;
+        MarkOutOfReach(hypotheses, members);
+    }
+
+    private AdjustmentProcedure ProcedureOf(PValueAdjustment rule) =>
+        _plan.Study.Analysis.Family == FamilyRule.ByFamilyThenAll && rule.OverSelectedFamilies is { } selecting ? selecting : rule.Procedure;
+
+    // The first adjustment for the family-wise error rate is the one whose first step is asked for.
+    private void MarkOutOfReach(in Hypotheses hypotheses, int[] members)
+    {
+        if (_plan.Adjustments.FirstOrDefault(adjustment => adjustment.Controls == ErrorRate.FamilyWise) is not PValueAdjustment { FirstStep: { } firstStep })
+            return;
+        var thresholds = new double[members.Length];
+        firstStep(hypotheses, _plan.Study.Analysis.Alpha, thresholds);
+        for (int i = 0; i < members.Length; i++)
+        {
+            if (_table.SmallestPossible[members[i]] > thresholds[i])
+                Columns.MarkOutOfReach(members[i]);
+        }
     }
 }

@@ -11,10 +11,14 @@ public sealed class BlockOutput
     /// <summary>The numbers beside them.</summary>
     public RecordBuffer<DetailRow> Details { get; } = new();
 
+    /// <summary>What adjustments by sign flips need of each endpoint.</summary>
+    public DifferenceBuffer Differences { get; } = new();
+
     /// <summary>Empties it for the next block.</summary>
     public void Clear()
     {
         Rows.Clear();
         Details.Clear();
+        Differences.Clear();
     }
 }

@@ -9,14 +9,18 @@ namespace MatchedSuite.Engine.Evaluation;
 /// <summary>The complete pairs of one endpoint, contrast and stratum, with what methods may ask for beside the endpoint.</summary>
 internal readonly ref struct CompletePairs
 {
-    private CompletePairs(PairInput input, int designed)
+    private CompletePairs(PairInput input, ReadOnlySpan<int> places, int designed)
     {
         Input = input;
+        Places = places;
         Designed = designed;
     }
 
     /// <summary>The pairs.</summary>
     public PairInput Input { get; }
+
+    /// <summary>Position of each pair among the sets of the stratum.</summary>
+    public ReadOnlySpan<int> Places { get; }
 
     /// <summary>Pairs that the matching gives, complete or not.</summary>
     public int Designed { get; }
@@ -37,13 +41,17 @@ internal readonly ref struct CompletePairs
         ZeroRule zeros, in Scratch.Frame frame)
     {
         Span<int> used = frame.Integers(sets.Length);
+        Span<int> places = frame.Integers(sets.Length);
         int count = 0;
-        foreach (int set in sets)
+        for (int place = 0; place < sets.Length; place++)
         {
+            int set = sets[place];
             if (double.IsNaN(index[set]) || double.IsNaN(reference[set]) || !columns.TimesKnown(set))
                 continue;
-            if (covariates == CovariateUse.Ignored || columns.CovariatesKnown[set])
-                used[count++] = set;
+            if (covariates != CovariateUse.Ignored && !columns.CovariatesKnown[set])
+                continue;
+            places[count] = place;
+            used[count++] = set;
         }
 
         used = used[..count];
@@ -59,6 +67,7 @@ internal readonly ref struct CompletePairs
                 IndexTime = Optional(columns.IndexTime, used, frame),
                 ReferenceTime = Optional(columns.ReferenceTime, used, frame),
             },
+            places[..count],
             sets.Length);
     }
 

@@ -24,11 +24,12 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
     /// <param name="values">The endpoint's values in the order of the arrangement's rows, NaN where missing; changed in place by the transform.</param>
     /// <param name="endpoint">What is known of the endpoint.</param>
     /// <param name="position">The endpoint's position within its block, written into the rows.</param>
-    /// <param name="output">Where rows and details go.</param>
+    /// <param name="output">Where rows, details and differences go.</param>
     /// <exception cref="Storage.RefusalException">A value does not fit the endpoint's kind.</exception>
     public void Evaluate(Span<double> values, EndpointInfo endpoint, int position, BlockOutput output)
     {
         KindCheck.Run(values, endpoint, plan);
+        output.Differences.Begin(plan.Flips?.Width ?? 0);
         int rowsBefore = output.Rows.Count;
         int detailsBefore = output.Details.Count;
         AddRows(values, endpoint, output, out int undefined);

@@ -39,7 +39,7 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         {
             int rowsBefore = output.Rows.Count;
             int detailsBefore = output.Details.Count;
-            undefined += AddContrast(values, above, endpoint, _design.Comparisons[contrast], output);
+            undefined += AddContrast(values, above, endpoint, contrast, output);
             foreach (ref ResultRow row in output.Rows.Records[rowsBefore..])
                 row.Contrast = contrast;
             foreach (ref DetailRow detail in output.Details.Records[detailsBefore..])
@@ -47,9 +47,10 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         }
     }
 
-    private int AddContrast(ReadOnlySpan<double> values, ReadOnlySpan<double> above, EndpointInfo endpoint, PairContrast places, BlockOutput output)
+    private int AddContrast(ReadOnlySpan<double> values, ReadOnlySpan<double> above, EndpointInfo endpoint, short contrast, BlockOutput output)
     {
         using Scratch.Frame frame = Scratch.Open();
+        PairContrast places = _design.Comparisons[contrast];
         Span<double> both = frame.Doubles(2 * places.Index.Sets);
         Span<double> index = both[..places.Index.Sets];
         Span<double> reference = both[places.Index.Sets..];
@@ -59,6 +60,8 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         int before = output.Rows.Count;
         foreach (PlannedMethod planned in _design.MethodsFor(endpoint.Kind))
             AddMethod(index, reference, places, planned, endpoint, output);
+        if (Plan.Flips is { } flips)
+            KeepDifferences(index, reference, places, contrast, endpoint.Kind, flips, output);
         PairDetails.Add(index, reference, places, endpoint, _strata, Plan, output.Details, Scratch);
         if (Plan.Study.Endpoints.PerStandardDeviation && endpoint.Kind == EndpointKind.Continuous)
             StandardScale.Apply(reference, output.Rows.Records[before..], Scratch);
@@ -105,6 +108,26 @@ internal sealed class PairsEvaluator : EndpointEvaluator
             row.Primary = planned.IsPrimary ? (short)1 : (short)0;
             row.LogBase = (short)logBase;
             row.Remarks |= unadjusted;
+        }
+    }
+
+    // What the primary method flips; its untested rows are no hypotheses, whatever is kept of them.
+    private void KeepDifferences(
+        ReadOnlySpan<double> index, ReadOnlySpan<double> reference, PairContrast places, short contrast, EndpointKind kind, FlipPlan plan, BlockOutput output)
+    {
+        FlipRule rule = _design.MethodsFor(kind)[0].Method.Flips!;
+        foreach (FlipSection section in plan.Sections)
+        {
+            if (section.Contrast != contrast)
+                continue;
+            using Scratch.Frame frame = Scratch.Open();
+            CompletePairs pairs = CompletePairs.Of(
+                index, reference, _strata.SetsOf(section.Stratum), places.Columns, CovariateUse.Ignored, Plan.Study.Analysis.Zeros, frame);
+            Span<double> scores = frame.Doubles(pairs.Count);
+            rule.Scores(pairs.Input.Pairs, scores, Scratch);
+            Span<double> kept = output.Differences.Row.Slice(section.Offset, section.Sets);
+            for (int pair = 0; pair < pairs.Count; pair++)
+                kept[pairs.Places[pair]] = scores[pair];
         }
     }
 

@@ -16,11 +16,12 @@ public static class Available
         DefaultMethods = ByDesignAndKind((design, kind) => [.. KnownNames.UsualMethods(design.Kind, kind).Where(design.MethodsFor(kind).Contains)]),
         Adjustments = [.. AdjustmentTable.All.Select(adjustment => adjustment.Name)],
         Transforms = Enum.GetValues<Transform>().ToHashSet(),
-        Families = new HashSet<FamilyRule> { FamilyRule.All, FamilyRule.ByFamily },
+        Families = Enum.GetValues<FamilyRule>().ToHashSet(),
+        Intervals = new HashSet<IntervalKind> { IntervalKind.Fcr, IntervalKind.Simultaneous },
         Keys = new HashSet<string>
         {
             "design.exposure", "design.stratum", "design.covariates", "design.person-time",
-            "endpoints.below-limit", "endpoints.scale", "analysis.zeros",
+            "endpoints.below-limit", "endpoints.scale", "analysis.zeros", "analysis.across", "analysis.intervals",
         },
     };
 

@@ -1,7 +1,10 @@
+using MatchedSuite.Engine.Adjusting;
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics;
+using MatchedSuite.Statistics.Distributions;
 using MatchedSuite.Statistics.Pairs;
+using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Methods;
 
@@ -32,6 +35,31 @@ internal static class ModeratedFinish
         });
         foreach (List<int> members in groups.Values)
             Finish(rows, members, plan.Options);
+    }
+
+    /// <summary>Intervals of finished primary rows at other confidences: the moderated error is in the row, so nothing is fitted again.</summary>
+    public static void SetIntervals(RecordStore<ResultRow> rows, AnalysisPlan plan, IntervalPlan wanted, AdjustedColumns columns)
+    {
+        int code = plan.MethodNames.ToList().IndexOf(Method);
+        if (code < 0)
+            return;
+        rows.Scan((int position, in ResultRow row) =>
+        {
+            if (row.Method != code)
+                return;
+            foreach (IntervalKind kind in wanted.Kinds)
+            {
+                double confidence = wanted.Confidence(kind, position);
+                if (!double.IsNaN(confidence))
+                    columns.SetInterval(kind, position, IntervalOf(row, plan.Options with { Confidence = confidence }));
+            }
+        });
+    }
+
+    private static Interval IntervalOf(in ResultRow row, TestOptions options)
+    {
+        double reach = row.StandardError * StudentT.UpperQuantile(options.TailShare, row.DegreesOfFreedom);
+        return Interval.Pointing(row.Estimate - reach, row.Estimate + reach, options.Sides);
     }
 
     private static void Finish(RecordStore<ResultRow> rows, List<int> members, TestOptions options)

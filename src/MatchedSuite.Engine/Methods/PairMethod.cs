@@ -16,4 +16,7 @@ public sealed record PairMethod(string Name, IReadOnlyList<EndpointKind> Kinds, 
 {
     /// <summary>What it does with covariates.</summary>
     public CovariateUse Covariates { get; init; } = CovariateUse.Ignored;
+
+    /// <summary>How it takes part in adjustments by sign flips; null where it cannot.</summary>
+    public FlipRule? Flips { get; init; }
 }

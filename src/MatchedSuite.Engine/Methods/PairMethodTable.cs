@@ -16,9 +16,9 @@ public static class PairMethodTable
     /// <summary>Every method, the usual first choice of a kind before the others.</summary>
     public static IReadOnlyList<PairMethod> All { get; } =
     [
-        new("paired-t", Continuous, EstimateScale.Analysis, StrataComparison.Means, PairedMean) { Covariates = CovariateUse.Adjusted },
+        new("paired-t", Continuous, EstimateScale.Analysis, StrataComparison.Means, PairedMean) { Covariates = CovariateUse.Adjusted, Flips = FlipRule.Differences },
         new(ModeratedFinish.Method, Continuous, EstimateScale.Analysis, StrataComparison.None, Plain(PairedT.Run)),
-        new("signed-rank", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, SignedRanks),
+        new("signed-rank", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, SignedRanks) { Flips = FlipRule.SignedRanks },
         new("sign", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, Plain(SignTest.Run)),
         new("sign-flip", Continuous, EstimateScale.Analysis, StrataComparison.Estimates, Plain(SignFlipMean.Run)),
         new("trimmed-mean", Continuous, EstimateScale.Analysis, StrataComparison.Means, Plain(TrimmedMean.Run)),

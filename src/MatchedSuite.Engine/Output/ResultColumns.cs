@@ -1,6 +1,7 @@
 using MatchedSuite.Engine.Adjusting;
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Engine.Rows;
+using MatchedSuite.Statistics;
 using MatchedSuite.Storage.Tables;
 using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Endpoints;
@@ -11,6 +12,8 @@ namespace MatchedSuite.Engine.Output;
 /// <remarks>docs/results.md describes every column; the order here is the order there.</remarks>
 internal sealed class ResultColumns
 {
+    private static readonly (IntervalKind Kind, string Name)[] Kinds = [(IntervalKind.Fcr, "fcr"), (IntervalKind.Simultaneous, "sim")];
+
     private readonly AnalysisPlan _plan;
     private readonly AdjustedColumns _adjusted;
     private readonly Func<int, EndpointInfo> _endpoint;
@@ -27,6 +30,7 @@ internal sealed class ResultColumns
             Text("contrast"), Text("stratum"), Text("method"), Truth("primary"),
             Integer("n_sets"), Integer("n_samples"), Integer("n_missing"),
             Real("estimate"), Real("standard_error"), Real("ci_low"), Real("ci_high"),
+            .. Kinds.Where(Asked).SelectMany(kind => (TableColumn[])[Real($"ci_{kind.Name}_low"), Real($"ci_{kind.Name}_high")]),
             Real("ratio"), Real("ratio_low"), Real("ratio_high"), Real("effect_size"),
             Real("statistic"), Real("df"), Real("df2"), Real("p_value"), Real("log10_p"),
             .. plan.Adjustments.Select(adjustment => Real($"p_{adjustment.ColumnName}")),
@@ -43,12 +47,12 @@ internal sealed class ResultColumns
     {
         var cells = new CellWriter(batch);
         AddIdentity(row, ref cells);
-        AddNumbers(row, ref cells);
+        AddNumbers(position, row, ref cells);
         for (int adjustment = 0; adjustment < _plan.Adjustments.Count; adjustment++)
             cells.Real(_adjusted.Of(adjustment, position).Value);
         for (int adjustment = 0; adjustment < _plan.Adjustments.Count; adjustment++)
             cells.Truth(_adjusted.Of(adjustment, position).IsAtMost(_plan.LevelOf(_plan.Adjustments[adjustment])));
-        cells.Text(RemarkCodes.Join(row.Remarks));
+        cells.Text(RemarkCodes.Join(row.Remarks | _adjusted.RemarksOf(position)));
         batch.Rows++;
     }
 
@@ -60,7 +64,7 @@ internal sealed class ResultColumns
 
     private static TableColumn Truth(string name) => new(name, ColumnType.Truth);
 
-    private static void AddNumbers(in ResultRow row, ref CellWriter cells)
+    private void AddNumbers(int position, in ResultRow row, ref CellWriter cells)
     {
         cells.Integer(row.Sets);
         cells.Integer(row.Samples);
@@ -69,6 +73,13 @@ internal sealed class ResultColumns
         cells.Real(row.StandardError);
         cells.Real(row.Low);
         cells.Real(row.High);
+        foreach (var (kind, _) in Kinds.Where(Asked))
+        {
+            Interval interval = _adjusted.IntervalOf(kind, position);
+            cells.Real(interval.Low);
+            cells.Real(interval.High);
+        }
+
         cells.Real(Ratio.Of(row.Estimate, (LogBase)row.LogBase));
         cells.Real(Ratio.Of(row.Low, (LogBase)row.LogBase));
         cells.Real(Ratio.Of(row.High, (LogBase)row.LogBase));
@@ -79,6 +90,8 @@ internal sealed class ResultColumns
         cells.Real(row.P.Value);
         cells.Real(row.P.Log10);
     }
+
+    private bool Asked((IntervalKind Kind, string Name) interval) => _plan.Study.Analysis.Intervals.Contains(interval.Kind);
 
     private void AddIdentity(in ResultRow row, ref CellWriter cells)
     {

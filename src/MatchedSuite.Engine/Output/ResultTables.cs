@@ -73,6 +73,7 @@ internal sealed class ResultTables
         foreach (int position in order.Positions.Take(count))
         {
             _rows.Read(position, row);
+            row[0].Remarks |= _adjusted.RemarksOf(position);
             Probability[] adjusted = [.. Enumerable.Range(0, _plan.Adjustments.Count).Select(adjustment => _adjusted.Of(adjustment, position))];
             top.Add(new SummaryRow(
                 _endpoint(row[0].Endpoint), _plan.Contrasts[row[0].Contrast], _plan.MethodNames[row[0].Method], row[0], adjusted,

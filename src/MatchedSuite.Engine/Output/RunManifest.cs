@@ -31,6 +31,7 @@ internal static class RunManifest
         WriteInputs(json, inputs);
         WriteCounts(json, run);
         WriteAdjustments(json, run);
+        WriteGuaranteed(json, run);
         WriteTexts(json, "warnings", run.Warnings);
         WriteTexts(json, "cautions", run.Cautions);
         WriteOutputs(json, folder.Partial);
@@ -103,7 +104,7 @@ internal static class RunManifest
         foreach (HypothesisGroup group in run.Groups)
         {
             json.WriteStartObject();
-            json.WriteString("contrast", run.Plan.Contrasts[group.Contrast]);
+            json.WriteString("contrast", run.Plan.ContrastName(group.Contrast));
             json.WriteString("stratum", run.Plan.StratumName(group.Stratum));
             json.WriteString("method", group.Method == HypothesisGroup.PrimaryMethods ? "primary" : run.Plan.MethodNames[group.Method]);
             if (group.Family is { } family)
@@ -111,12 +112,58 @@ internal static class RunManifest
             json.WriteNumber("m", group.Hypotheses);
             json.WriteStartObject("rejected");
             for (int i = 0; i < group.Rejected.Length; i++)
-                json.WriteNumber(run.Plan.Adjustments[i].Name, group.Rejected[i]);
+            {
+                if (group.Rejected[i] is { } rejected)
+                    json.WriteNumber(run.Plan.Adjustments[i].Name, rejected);
+            }
+
             json.WriteEndObject();
+            WriteWhole(json, group);
             json.WriteEndObject();
         }
 
         json.WriteEndArray();
+    }
+
+    private static void WriteGuaranteed(Utf8JsonWriter json, FinishedRun run)
+    {
+        json.WriteStartArray("true_discoveries");
+        foreach (GuaranteedDiscoveries whole in run.Guaranteed)
+        {
+            json.WriteStartObject();
+            json.WriteString("contrast", run.Plan.ContrastName(whole.Contrast));
+            json.WriteString("stratum", run.Plan.StratumName(whole.Stratum));
+            json.WriteNumber("m", whole.Tested);
+            json.WriteNumber("at_least", whole.AtLeast);
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    }
+
+    // What is said of a group as a whole; a number that does not exist is left out.
+    private static void WriteWhole(Utf8JsonWriter json, HypothesisGroup group)
+    {
+        if (group.Hypotheses > 0)
+        {
+            json.WriteNumber("true_null_share", group.TrueNullShare);
+            json.WriteNumber("simes_p", group.SimesP.Value);
+        }
+
+        if (group.Flips.Count == 0)
+            return;
+        json.WriteStartObject("resampling");
+        foreach (FlipFacts flips in group.Flips)
+        {
+            json.WriteStartObject(flips.Adjustment);
+            json.WriteNumber("flips", flips.Flips);
+            json.WriteBoolean("all_flips", flips.Exhaustive);
+            if (double.IsFinite(flips.CriticalValue))
+                json.WriteNumber("critical_value", flips.CriticalValue);
+            json.WriteEndObject();
+        }
+
+        json.WriteEndObject();
     }
 
     private static void WriteTexts(Utf8JsonWriter json, string name, IReadOnlyList<string> texts)

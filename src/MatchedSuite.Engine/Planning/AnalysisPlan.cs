@@ -1,3 +1,4 @@
+using MatchedSuite.Engine.Adjusting;
 using MatchedSuite.Engine.Evaluation;
 using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Rows;
@@ -29,9 +30,11 @@ public sealed class AnalysisPlan
             Resamples = Study.Analysis.Resamples,
             Seed = Study.Seed,
         };
+        AdjustmentRules.Check(Study, Catalogue);
         Adjustments = [.. Study.Analysis.Adjust.Select(AdjustmentTable.Named)];
         _samples = inputs.Source.Samples;
         _design = DesignTable.Lay(inputs);
+        Flips = AdjustmentRules.StatisticOf(Study, Catalogue) is { } statistic ? new FlipPlan(statistic, _design.FlipSections) : null;
     }
 
     /// <summary>The study.</summary>
@@ -59,10 +62,22 @@ public sealed class AnalysisPlan
     public IReadOnlyList<string> Warnings => _design.Warnings;
 
     /// <summary>Direction and confidence of every test.</summary>
-    public TestOptions Options { get; }
+    public TestOptions Options { get; private set; }
 
     /// <summary>The adjustments asked for.</summary>
     public IReadOnlyList<Adjustment> Adjustments { get; }
+
+    /// <summary>What is kept of every endpoint for adjustments by sign flips; null where none is asked for.</summary>
+    public FlipPlan? Flips { get; private set; }
+
+    /// <summary>The same methods with intervals of another confidence; nothing is kept for flips.</summary>
+    public AnalysisPlan At(double confidence)
+    {
+        var other = (AnalysisPlan)MemberwiseClone();
+        other.Options = Options with { Confidence = confidence };
+        other.Flips = null;
+        return other;
+    }
 
     /// <summary>An evaluator for one worker.</summary>
     public EndpointEvaluator NewEvaluator() => _design.NewEvaluator(this);
@@ -77,6 +92,9 @@ public sealed class AnalysisPlan
 
     /// <summary>Name of a used sample, by its position in a row of values.</summary>
     public string SampleName(int position) => _samples[SourceColumns[position]];
+
+    /// <summary>Name of a contrast; of all of them where hypotheses are adjusted across contrasts.</summary>
+    public string ContrastName(short contrast) => contrast == HypothesisGroup.AllContrasts ? "all" : Contrasts[contrast];
 
     /// <summary>The level an adjusted p-value is compared with.</summary>
     public double LevelOf(Adjustment adjustment) =>

@@ -1,3 +1,4 @@
+using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Running;
 using MatchedSuite.Study.Definition;
 
@@ -8,4 +9,8 @@ namespace MatchedSuite.Engine.Planning;
 /// <param name="Lay">Lays out a study's comparisons and methods.</param>
 /// <param name="MethodsFor">Names of the methods for a kind of endpoint, in the order in which they are listed to the user.</param>
 public sealed record DesignEntry(
-    DesignKind Kind, Func<StudyInputs, IDesign> Lay, Func<EndpointKind, IReadOnlyList<string>> MethodsFor);
+    DesignKind Kind, Func<StudyInputs, IDesign> Lay, Func<EndpointKind, IReadOnlyList<string>> MethodsFor)
+{
+    /// <summary>How a method takes part in adjustments by sign flips; null where it cannot.</summary>
+    public Func<string, FlipRule?> FlipOf { get; init; } = _ => null;
+}

@@ -10,10 +10,12 @@ public static class DesignTable
     /// <summary>Every kind.</summary>
     public static IReadOnlyList<DesignEntry> All { get; } =
     [
-        new(DesignKind.Pairs, inputs => new PairsDesign(inputs), PairMethodTable.NamesFor),
+        new(DesignKind.Pairs, inputs => new PairsDesign(inputs), PairMethodTable.NamesFor) { FlipOf = name => PairMethodTable.Named(name).Flips },
     ];
 
+    /// <summary>The entry of a study's kind of design.</summary>
+    public static DesignEntry Of(StudyDefinition study) => All.Single(entry => entry.Kind == study.Design.Kind);
+
     /// <summary>Lays out a study's comparisons and methods.</summary>
-    public static IDesign Lay(StudyInputs inputs) =>
-        All.Single(entry => entry.Kind == inputs.Study.Design.Kind).Lay(inputs);
+    public static IDesign Lay(StudyInputs inputs) => Of(inputs.Study).Lay(inputs);
 }

@@ -14,6 +14,9 @@ public interface IDesign
     /// <summary>What looks odd once the design is laid out, one sentence each.</summary>
     IReadOnlyList<string> Warnings => [];
 
+    /// <summary>The values that evaluators keep of each endpoint when sets are flipped, one part a contrast and stratum; none where they keep none.</summary>
+    IReadOnlyList<FlipSection> FlipSections => [];
+
     /// <summary>An evaluator for one worker.</summary>
     EndpointEvaluator NewEvaluator(AnalysisPlan plan);
 }

@@ -25,6 +25,7 @@ public sealed class PairsDesign : IDesign
         Place reference = arrangement.Places[1];
         Comparisons = [new PairContrast(contrast, index, reference, PairColumns.Of(inputs, index, reference))];
         Contrasts = [contrast];
+        FlipSections = FlipPlan.SectionsOf(Contrasts.Count, StrataSets.Of(arrangement));
         _methods = study.Analysis.Methods.ToDictionary(
             of => of.Key,
             of => of.Value.Select((name, position) => Planned(name, position == 0)).ToArray());
@@ -48,6 +49,9 @@ public sealed class PairsDesign : IDesign
 
     /// <summary>The method for values above and below a detection limit; null where no endpoint has one.</summary>
     public PlannedMethod? AboveBelow { get; }
+
+    /// <inheritdoc/>
+    public IReadOnlyList<FlipSection> FlipSections { get; }
 
     /// <summary>The methods for a kind of endpoint, the primary one first.</summary>
     public IReadOnlyList<PlannedMethod> MethodsFor(EndpointKind kind) => _methods[kind];

@@ -5,7 +5,9 @@ using MatchedSuite.Engine.Output;
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Storage;
+using MatchedSuite.Storage.Values;
 using MatchedSuite.Study.Definition;
+using MatchedSuite.Study.Endpoints;
 
 namespace MatchedSuite.Engine.Running;
 
@@ -76,22 +78,27 @@ public sealed class AnalysisRun
     {
         var plan = new AnalysisPlan(inputs);
         Warn(plan.Warnings);
-        using var store = new ResultStore(_folder.Partial);
+        using var store = new ResultStore(_folder.Partial)
+        {
+            Differences = plan.Flips is { } flips ? new DifferenceStore(flips.Width, _options.MemoryForDifferences, _folder.Partial) : null,
+        };
         EndpointStream stream = EndpointStream.Run(plan, inputs.Source, store, _options, _observer, cancellation);
         RefuseNoEndpoints(stream);
         WarnOfStream(stream, plan);
-        string Family(int endpoint) => plan.Catalogue.Describe(stream.Names[endpoint]).Family;
-        ModeratedFinish.Run(store.Rows, plan, Family);
+        Func<int, EndpointInfo> describe = endpoint => plan.Catalogue.Describe(stream.Names[endpoint]);
+        var traits = new EndpointTraits(stream.Names.Count, describe);
+        ModeratedFinish.Run(store.Rows, plan, traits.Family);
         _execution.StepDone("tests");
 
-        AdjustedColumns adjusted = RowAdjuster.Run(store.Rows, plan, Family);
-        _execution.StepDone("adjustment");
-        var tables = new ResultTables(store.Rows, adjusted, plan, endpoint => plan.Catalogue.Describe(stream.Names[endpoint]));
+        HypothesisTable table = HypothesisTable.Of(store.Rows, plan, traits);
+        AdjustedColumns adjusted = Adjust(inputs.Source, store, plan, stream.Names, table, traits, cancellation);
+        var tables = new ResultTables(store.Rows, adjusted, plan, describe);
         tables.WriteResults(_folder);
         DetailTable.Write(_folder, store.Details, plan, stream.Names);
         TwinTable.Write(_folder, store.Details, plan, stream.Names);
         SummaryOrder summary = tables.WriteSummary(_folder);
         tables.WriteUntested(_folder);
+        IReadOnlyList<GuaranteedDiscoveries> guaranteed = new DiscoveryTables(plan, table, traits, stream.Names).Write(_folder);
         _execution.StepDone("tables");
         return new FinishedRun
         {
@@ -102,10 +109,37 @@ public sealed class AnalysisRun
             PrimaryRows = summary.Count,
             TestedRows = summary.Tested,
             Groups = adjusted.Groups,
+            Guaranteed = guaranteed,
             Top = tables.Top(summary, _study.Output.Top),
             Warnings = _warnings,
             Cautions = Cautions.For(_study, summary.SomeMissing),
         };
+    }
+
+    private AdjustedColumns Adjust(
+        EndpointSource source, ResultStore store, AnalysisPlan plan, IReadOnlyList<string> names, HypothesisTable table, EndpointTraits traits,
+        CancellationToken cancellation)
+    {
+        var adjuster = new RowAdjuster(plan, table, traits);
+        adjuster.AdjustByP();
+        _execution.StepDone("adjustment");
+        if (store.Differences is { } differences)
+        {
+            _observer.Step("flipping whole sets");
+            adjuster.AdjustByFlips(differences, _options.Threads, _options.MemoryForDifferences, cancellation);
+            _execution.StepDone("resampling");
+        }
+
+        if (_study.Analysis.Intervals.Count > 0)
+        {
+            _observer.Step("finding intervals for the discoveries");
+            var wanted = new IntervalPlan(plan, table, adjuster.Columns);
+            IntervalPass.Run(plan, source, names, wanted, adjuster.Columns, _options, _observer, cancellation);
+            ModeratedFinish.SetIntervals(store.Rows, plan, wanted, adjuster.Columns);
+            _execution.StepDone("intervals");
+        }
+
+        return adjuster.Columns;
     }
 
     private void RefuseBrokenGates(StudyInputs inputs, Task<IReadOnlyList<InputRecord>> fingerprints)

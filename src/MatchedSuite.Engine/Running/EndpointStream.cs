@@ -44,7 +44,7 @@ internal sealed class EndpointStream
     }
 
     // A quarter of the memory for blocks under way, shared by the threads; never so large that threads starve.
-    private static int BlockSize(AnalysisPlan plan, RunOptions options)
+    internal static int BlockSize(AnalysisPlan plan, RunOptions options)
     {
         if (options.EndpointsPerBlock is { } asked)
             return asked;
@@ -72,6 +72,7 @@ internal sealed class EndpointStream
         Names.AddRange(block.Names);
         _store.Rows.Append(block.Output.Rows.Records);
         _store.Details.Append(block.Output.Details.Records);
+        _store.Differences?.Append(block.Output.Differences.Values);
         UndefinedValues += block.UndefinedValues;
         EndpointsWithUndefinedValues += block.EndpointsWithUndefinedValues;
         _observer.Progress(block.Reached, Names.Count);

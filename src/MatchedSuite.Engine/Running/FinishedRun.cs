@@ -28,6 +28,9 @@ public sealed record FinishedRun
     /// <summary>Which hypotheses were adjusted together, with counts of rejections.</summary>
     public required IReadOnlyList<HypothesisGroup> Groups { get; init; }
 
+    /// <summary>How many endpoints differ at least, contrast by contrast.</summary>
+    public required IReadOnlyList<GuaranteedDiscoveries> Guaranteed { get; init; }
+
     /// <summary>The first rows of the summary, smallest p first.</summary>
     public required IReadOnlyList<SummaryRow> Top { get; init; }
 

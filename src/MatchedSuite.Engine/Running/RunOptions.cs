@@ -17,6 +17,12 @@ public sealed record RunOptions
     /// <summary>Upper bound in bytes for the values held in memory.</summary>
     public long Memory { get; init; } = 1L << 30;
 
+    /// <summary>
+    /// The part of the memory that differences for adjustments by sign flips may take: a quarter, beside a half for values to be
+    /// reordered and a quarter for the blocks under way.
+    /// </summary>
+    internal long MemoryForDifferences => Memory / 4;
+
     /// <summary>What a warning does.</summary>
     public WarningRule Warnings { get; init; } = WarningRule.Report;
 

@@ -1,5 +1,6 @@
 using System.Globalization;
 using MatchedSuite.Engine.Methods;
+using MatchedSuite.Engine.Planning;
 using MatchedSuite.Storage;
 using MatchedSuite.Storage.Tables;
 using MatchedSuite.Storage.Values;
@@ -32,6 +33,7 @@ public sealed record StudyCheck
         foreach (string column in LinkingColumns.Of(study))
             ColumnNames.Find(study.Data.Samples, sheet, column);
         EndpointCatalogue catalogue = EndpointCatalogue.Read(study);
+        AdjustmentRules.Check(study, catalogue);
         string shape = study.Data.Values is { } values
             ? ShapeOf(study, catalogue, values, TextTable.ReadHeader(values, study.Data.Dialect))
             : SampleRowsShape(study, catalogue, sheet);

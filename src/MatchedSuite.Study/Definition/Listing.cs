@@ -1,7 +1,7 @@
 namespace MatchedSuite.Study.Definition;
 
 /// <summary>How a message lists names.</summary>
-internal static class Listing
+public static class Listing
 {
     // More names than this hide the point of a message.
     private const int MostNames = 20;

@@ -54,6 +54,7 @@ internal sealed class DictionaryReading
         return new EndpointInfo
         {
             Name = name,
+            Place = row,
             Label = Cell("label", row),
             Kind = kind,
             Unit = Cell("unit", row),

@@ -29,6 +29,8 @@ public sealed class EndpointCatalogue
         _include = [.. section.Include.Select(text => new NamePattern(text))];
         _exclude = [.. section.Exclude.Select(text => new NamePattern(text))];
         _excludeUsed = new bool[_exclude.Length];
+        Kinds = entries.Values.Where(entry => Wanted(entry.Name)).Select(entry => entry.Kind).Append(section.Kind).ToHashSet();
+        Array.Clear(_excludeUsed);
         Warnings = [.. UnwantedEntries()];
     }
 
@@ -37,6 +39,9 @@ public sealed class EndpointCatalogue
 
     /// <summary>True where the dictionary gives any endpoint a detection limit.</summary>
     public bool HasDetectionLimits => _entries.Values.Any(entry => entry.DetectionLimit is not null);
+
+    /// <summary>The kinds of endpoint that the study can meet: that of endpoints without an entry, and those of the wanted entries.</summary>
+    public IReadOnlySet<EndpointKind> Kinds { get; }
 
     /// <summary>Reads the study's dictionary, if it names one.</summary>
     /// <exception cref="RefusalException">The dictionary has an unknown column, kind or transform, a number that is none, or an endpoint twice; names the line.</exception>

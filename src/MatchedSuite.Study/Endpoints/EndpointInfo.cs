@@ -29,6 +29,9 @@ public sealed record EndpointInfo
     /// <summary>Weight for weighted adjustments, 0 or more; 1 when there is none.</summary>
     public double Weight { get; init; } = 1;
 
+    /// <summary>Position of the endpoint in the dictionary, from 0: the order of tests that go one after the other; last of all where it has no entry.</summary>
+    public int Place { get; init; } = int.MaxValue;
+
     /// <summary>True where the dictionary calls the endpoint primary.</summary>
     public bool Primary { get; init; }
 }

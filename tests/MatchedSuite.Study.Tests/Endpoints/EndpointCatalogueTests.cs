@@ -20,17 +20,17 @@ public class EndpointCatalogueTests
     {
         EndpointCatalogue catalogue = Read(Dictionary, "transform: log");
         Assert.Equal(
-            new EndpointInfo { Name = "crp", Label = "C-reactive protein", Kind = EndpointKind.Continuous, Unit = "mg/L", Transform = Transform.Log2, DetectionLimit = 0.2, Family = "inflammation", Weight = 2, Primary = true },
+            new EndpointInfo { Name = "crp", Label = "C-reactive protein", Kind = EndpointKind.Continuous, Unit = "mg/L", Transform = Transform.Log2, DetectionLimit = 0.2, Family = "inflammation", Weight = 2, Primary = true, Place = 0 },
             catalogue.Describe("crp"));
-        Assert.Equal(new EndpointInfo { Name = "smoker", Label = "Smokes", Kind = EndpointKind.Binary, Family = "habits" }, catalogue.Describe("smoker"));
-        Assert.Equal(new EndpointInfo { Name = "pain", Kind = EndpointKind.Ordinal, Family = "all", Weight = 1 }, catalogue.Describe("pain"));
+        Assert.Equal(new EndpointInfo { Name = "smoker", Label = "Smokes", Kind = EndpointKind.Binary, Family = "habits", Place = 1 }, catalogue.Describe("smoker"));
+        Assert.Equal(new EndpointInfo { Name = "pain", Kind = EndpointKind.Ordinal, Family = "all", Weight = 1, Place = 2 }, catalogue.Describe("pain"));
         Assert.Equal((Transform.None, 0.5), (catalogue.Describe("il6").Transform, catalogue.Describe("il6").Weight));
     }
 
     [Fact]
     public void An_endpoint_without_an_entry_has_the_defaults_of_the_study_file()
     {
-        Assert.Equal(new EndpointInfo { Name = "tnf", Kind = EndpointKind.Continuous, Transform = Transform.Log }, Read(Dictionary, "transform: log").Describe("tnf"));
+        Assert.Equal(new EndpointInfo { Name = "tnf", Kind = EndpointKind.Continuous, Transform = Transform.Log, Place = int.MaxValue }, Read(Dictionary, "transform: log").Describe("tnf"));
         Assert.Equal(new EndpointInfo { Name = "tnf", Kind = EndpointKind.Binary }, Read(null, "kind: binary, transform: log").Describe("tnf"));
     }
 
