@@ -39,6 +39,7 @@ internal static class CommandLine
             AnalyzeCommand.Create(common),
             AuditCommand.Create(common),
             CheckCommand.Create(common),
+            AdjustCommand.Create(common),
             DemoCommand.Create(common),
         };
         common.AddTo(root);

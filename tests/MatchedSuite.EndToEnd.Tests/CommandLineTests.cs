@@ -20,6 +20,7 @@ public class CommandLineTests
     [InlineData("analyze", "--help")]
     [InlineData("audit", "--help")]
     [InlineData("check", "--help")]
+    [InlineData("adjust", "--help")]
     [InlineData("demo", "--help")]
     public void Help_goes_to_standard_output(params string[] arguments)
     {
@@ -38,6 +39,8 @@ public class CommandLineTests
     [InlineData("analyze", "study.yaml", "--threads", "1,5")]
     [InlineData("analyze", "study.yaml", "--seed", "x")]
     [InlineData("analyze", "study.yaml", "--memory", "1KiB")]
+    [InlineData("adjust", "panel.csv")]
+    [InlineData("adjust", "panel.csv", "--p", "s1a", "--level", "1")]
     public void Wrong_usage_gives_exit_code_2_and_no_output(params string[] arguments)
     {
         using StudyFolder folder = StudyFolder.Small();

@@ -37,6 +37,21 @@ internal static class NumberArguments
         },
     };
 
+    /// <summary>A level: a number strictly between 0 and 1.</summary>
+    public static Option<double?> Level(string name, string description) => new(name)
+    {
+        Description = description,
+        HelpName = "A",
+        CustomParser = result =>
+        {
+            const NumberStyles style = NumberStyles.AllowDecimalPoint | NumberStyles.AllowExponent;
+            if (double.TryParse(result.Tokens[0].Value, style, CultureInfo.InvariantCulture, out double level) && level is > 0 and < 1)
+                return level;
+            result.AddError($"{name}: '{result.Tokens[0].Value}' is no level above 0 and below 1, such as 0.05.");
+            return null;
+        },
+    };
+
     private static bool TryReadSize(string text, out long bytes)
     {
         foreach (var (suffix, factor) in Sizes)

@@ -1,4 +1,5 @@
 using System.Globalization;
+using System.Text;
 using MatchedSuite.Engine.Running;
 
 namespace MatchedSuite.Cli.Terminal;
@@ -82,6 +83,14 @@ internal sealed class Voice : IRunObserver, IDisposable
         ProgressOver();
         Console.Out.Write(text);
         Console.Out.Flush();
+    }
+
+    /// <summary>A long result for standard output, written as it comes.</summary>
+    public void Result(Action<TextWriter> write)
+    {
+        ProgressOver();
+        using var writer = new StreamWriter(Console.OpenStandardOutput(), new UTF8Encoding(false));
+        write(writer);
     }
 
     /// <inheritdoc/>
