@@ -35,7 +35,7 @@ public class ClosedTestingTests
 
     [Fact]
     public void A_single_hypothesis_is_a_discovery_exactly_when_Hommel_rejects_it() =>
-        Gen.Select(PValueVectors.CompleteUpTo(40), Gen.Double[0.001, 0.6]).Sample((p, level) =>
+        Gen.Select(PValueVectors.CompleteUpTo(40), PValueVectors.Levels(0.001, 0.6)).Sample((p, level) =>
         {
             var bounds = ClosedTesting.WithSimes(p, level);
             var adjusted = PValueVectors.Adjusted(Hommel.Adjust, p);

@@ -10,7 +10,7 @@ public class FamilySelectionTests
 
     [Fact]
     public void At_every_level_it_rejects_what_selection_and_then_testing_within_reject() =>
-        Gen.Select(Studies, Gen.Double[0.002, 0.7]).Sample((study, level) =>
+        Gen.Select(Studies, PValueVectors.Levels(0.002, 0.7)).Sample((study, level) =>
         {
             var families = new Families(study.FamilyOf);
             var adjusted = new Probability[study.P.Length];

@@ -19,6 +19,9 @@ internal static class PValueVectors
 
     public static Gen<Probability[]> CompleteUpTo(int length) => Single.Array[1, length];
 
+    /// <summary>Levels that no adjusted p-value meets to the last bit: there, rounding alone would decide.</summary>
+    public static Gen<double> Levels(double low, double high) => Gen.Double[low, high].Select(level => level * (1 + 1e-6 / Math.Sqrt(2)));
+
     public static Probability[] Adjusted(Statistics.Multiplicity.Adjustment procedure, Probability[] p)
     {
         var adjusted = new Probability[p.Length];

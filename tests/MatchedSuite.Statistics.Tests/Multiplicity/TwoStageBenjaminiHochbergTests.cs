@@ -7,7 +7,7 @@ public class TwoStageBenjaminiHochbergTests
 {
     [Fact]
     public void At_every_level_the_adjusted_p_values_reject_what_the_two_stages_reject() =>
-        Gen.Select(PValueVectors.CompleteUpTo(30), Gen.Double[0.002, 0.9]).Sample((p, level) =>
+        Gen.Select(PValueVectors.CompleteUpTo(30), PValueVectors.Levels(0.002, 0.9)).Sample((p, level) =>
         {
             var any = PValueVectors.Adjusted(TwoStageBenjaminiHochberg.Adjust, p);
             var one = new Probability[p.Length];
