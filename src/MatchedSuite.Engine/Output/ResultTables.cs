@@ -30,20 +30,20 @@ internal sealed class ResultTables
         _columns = new ResultColumns(plan, adjusted, endpoint);
     }
 
-    /// <summary>Writes <c>results.parquet</c> and, where it is not too long, <c>results.csv</c>.</summary>
-    public void WriteResults(RunFolder folder)
+    /// <summary>Writes <c>results.parquet</c>.</summary>
+    public void WriteParquet(RunFolder folder)
     {
-        var sinks = new List<ITableSink> { new ParquetTableSink(folder.PathOf("results.parquet"), _columns.Schema) };
-        if (_rows.Count <= MostRowsOfCsv)
-            sinks.Add(new CsvTableSink(folder.PathOf("results.csv"), _columns.Schema));
-        try
-        {
-            WriteAll(sinks);
-        }
-        finally
-        {
-            sinks.ForEach(sink => sink.Dispose());
-        }
+        using var sink = new ParquetTableSink(folder.PathOf("results.parquet"), _columns.Schema);
+        WriteAll(sink);
+    }
+
+    /// <summary>Writes <c>results.csv</c>, where it is not too long.</summary>
+    public void WriteCsv(RunFolder folder)
+    {
+        if (_rows.Count > MostRowsOfCsv)
+            return;
+        using var sink = new CsvTableSink(folder.PathOf("results.csv"), _columns.Schema);
+        WriteAll(sink);
     }
 
     /// <summary>Writes <c>summary.csv</c>: the primary row of every endpoint and contrast, smallest p first, untested last.</summary>
@@ -118,7 +118,8 @@ internal sealed class ResultTables
         batch.Rows = 0;
     }
 
-    private void WriteAll(List<ITableSink> sinks)
+    private void WriteAll<TSink>(TSink sink)
+        where TSink : ITableSink
     {
         var batch = new TableBatch(_columns.Schema, Math.Clamp(_rows.Count, 1, BatchRows));
         _rows.Scan((int position, in ResultRow row) =>
@@ -126,11 +127,11 @@ internal sealed class ResultTables
             _columns.Add(position, row, batch);
             if (batch.Rows < batch.Capacity)
                 return;
-            sinks.ForEach(sink => sink.Write(batch));
+            sink.Write(batch);
             batch.Rows = 0;
         });
         if (batch.Rows > 0)
-            sinks.ForEach(sink => sink.Write(batch));
-        sinks.ForEach(sink => sink.Complete());
+            sink.Write(batch);
+        sink.Complete();
     }
 }

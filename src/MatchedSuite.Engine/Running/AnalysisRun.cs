@@ -60,14 +60,18 @@ public sealed class AnalysisRun
         _observer.Step($"reading {_study.Data.Samples}");
         using StudyInputs inputs = StudyInputs.Open(_study, _options, _folder.Partial);
         Warn(inputs.Audit.Warnings.Select(warning => warning.Text));
-        AuditFiles.Write(_folder, inputs);
-        auditPage(inputs, _folder);
+        using var audit = new SideTask(_options.Threads, () =>
+        {
+            AuditFiles.Write(_folder, inputs);
+            auditPage(inputs, _folder);
+        });
         _execution.StepDone("audit");
-        RefuseBrokenGates(inputs, fingerprints);
+        RefuseBrokenGates(inputs, audit, fingerprints);
 
         _observer.Step($"testing the endpoints of {_study.Data.Values ?? _study.Data.Samples}");
         FinishedRun run = Analyse(inputs, cancellation);
         pages(run, _folder);
+        audit.Finish();
         RunManifest.Write(_folder, run, fingerprints.GetAwaiter().GetResult(), _execution);
         cancellation.ThrowIfCancellationRequested();
         _folder.Commit();
@@ -93,12 +97,18 @@ public sealed class AnalysisRun
         HypothesisTable table = HypothesisTable.Of(store.Rows, plan, traits);
         AdjustedColumns adjusted = Adjust(inputs.Source, store, plan, stream.Names, table, traits, cancellation);
         var tables = new ResultTables(store.Rows, adjusted, plan, describe);
-        tables.WriteResults(_folder);
-        DetailTable.Write(_folder, store.Details, plan, stream.Names);
-        TwinTable.Write(_folder, store.Details, plan, stream.Names);
+        using var parquet = new SideTask(_options.Threads, () => tables.WriteParquet(_folder));
+        using var details = new SideTask(_options.Threads, () =>
+        {
+            DetailTable.Write(_folder, store.Details, plan, stream.Names);
+            TwinTable.Write(_folder, store.Details, plan, stream.Names);
+        });
+        tables.WriteCsv(_folder);
         SummaryOrder summary = tables.WriteSummary(_folder);
         tables.WriteUntested(_folder);
         IReadOnlyList<GuaranteedDiscoveries> guaranteed = new DiscoveryTables(plan, table, traits, stream.Names).Write(_folder);
+        parquet.Finish();
+        details.Finish();
         _execution.StepDone("tables");
         return new FinishedRun
         {
@@ -142,11 +152,12 @@ public sealed class AnalysisRun
         return adjuster.Columns;
     }
 
-    private void RefuseBrokenGates(StudyInputs inputs, Task<IReadOnlyList<InputRecord>> fingerprints)
+    private void RefuseBrokenGates(StudyInputs inputs, SideTask audit, Task<IReadOnlyList<InputRecord>> fingerprints)
     {
         string[] gates = [.. inputs.Audit.BrokenGates.Select(GateBrokenException.Describe)];
         if (gates.Length == 0)
             return;
+        audit.Finish();
         RunManifest.WriteAuditOnly(_folder, _study, gates, fingerprints.GetAwaiter().GetResult(), _execution);
         _folder.Commit();
         throw new GateBrokenException(gates, _folder.Target);
