@@ -24,6 +24,17 @@ public class SameBytesTests
     }
 
     [Fact]
+    public void The_program_compiled_ahead_and_the_program_on_the_runtime_write_the_same_bytes()
+    {
+        using var folder = new StudyFolder();
+        Assert.Equal(0, folder.Run("demo", "--out", "demo", "--quiet").ExitCode);
+        Finished run = MatchedProgram.RunOnRuntime(folder.Path, "analyze", "demo/study.yaml", "--quiet", "--out", "again");
+        Assert.True(run.ExitCode == 0, run.Error);
+        foreach (string file in Written)
+            Assert.True(File.ReadAllBytes(folder.At($"demo/results/{file}")).SequenceEqual(File.ReadAllBytes(folder.At($"again/{file}"))), file);
+    }
+
+    [Fact]
     public void Manifests_differ_in_their_execution_alone()
     {
         using StudyFolder folder = StudyFolder.Small();

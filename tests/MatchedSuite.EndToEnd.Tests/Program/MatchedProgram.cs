@@ -14,6 +14,18 @@ internal static class MatchedProgram
     public static Finished Run(string folder, params string[] arguments)
     {
         using Process process = Start(folder, arguments);
+        return WaitFor(process, arguments);
+    }
+
+    /// <summary>Runs the same program on the .NET runtime, compiled while it runs, in a folder and waits for its end.</summary>
+    public static Finished RunOnRuntime(string folder, params string[] arguments)
+    {
+        using Process process = StartProcess("dotnet", folder, ["exec", Path.Combine(AppContext.BaseDirectory, "matched.dll"), .. arguments]);
+        return WaitFor(process, arguments);
+    }
+
+    private static Finished WaitFor(Process process, string[] arguments)
+    {
         Task<string> output = process.StandardOutput.ReadToEndAsync();
         Task<string> error = process.StandardError.ReadToEndAsync();
         if (!process.WaitForExit(Patience))
@@ -29,7 +41,12 @@ internal static class MatchedProgram
     public static Process Start(string folder, params string[] arguments)
     {
         Assert.True(File.Exists(Executable), $"{Executable} is not there; run 'make build' first.");
-        var start = new ProcessStartInfo(Executable, arguments)
+        return StartProcess(Executable, folder, arguments);
+    }
+
+    private static Process StartProcess(string program, string folder, string[] arguments)
+    {
+        var start = new ProcessStartInfo(program, arguments)
         {
             WorkingDirectory = folder,
             RedirectStandardOutput = true,
