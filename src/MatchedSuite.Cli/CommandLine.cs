@@ -17,8 +17,8 @@ internal static class CommandLine
         ParseResult parsed = Root().Parse(args);
         if (parsed.Errors.Count > 0)
         {
-            foreach (var error in parsed.Errors)
-                Console.Error.WriteLine($"matched: {error.Message}");
+            foreach (string complaint in UsageComplaint.Of(parsed))
+                Console.Error.WriteLine($"matched: {complaint}");
             Console.Error.WriteLine("matched: see 'matched --help' for the commands and their options");
             return ExitCode.Refused;
         }

@@ -54,6 +54,17 @@ public class RunFolderTests
     }
 
     [Fact]
+    public void A_folder_with_the_study_inside_is_never_replaced()
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        folder.Write("run.json", "{}");
+        Finished run = folder.Run("analyze", "study.yaml", "--out", ".");
+        Assert.Equal(2, run.ExitCode);
+        Assert.Contains("which the run reads", run.Error, StringComparison.Ordinal);
+        Assert.True(File.Exists(folder.At("panel.csv")));
+    }
+
+    [Fact]
     public void A_refused_study_leaves_the_earlier_run_as_it_was()
     {
         using StudyFolder folder = StudyFolder.Small();

@@ -1,3 +1,4 @@
+using MatchedSuite.Storage;
 using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Running;
@@ -30,11 +31,32 @@ public sealed record RunOptions
     public int? EndpointsPerBlock { get; init; }
 
     /// <summary>The study as these options change it: folder and seed of the command line go before the file's.</summary>
-    internal StudyDefinition Override(StudyDefinition study) => study with
+    /// <exception cref="RefusalException">The folder of the command line holds the study file or one of its inputs.</exception>
+    internal StudyDefinition Override(StudyDefinition study)
     {
-        Seed = Seed ?? study.Seed,
-        Output = Folder is null ? study.Output : study.Output with { Folder = Path.GetFullPath(Folder) },
-    };
+        if (Folder is not null)
+            RefuseFolderOfInputs(Path.GetFullPath(Folder), study);
+        return study with
+        {
+            Seed = Seed ?? study.Seed,
+            Output = Folder is null ? study.Output : study.Output with { Folder = Path.GetFullPath(Folder) },
+        };
+    }
+
+    // The folder is replaced as a whole: with an input inside, a run would delete it.
+    private static void RefuseFolderOfInputs(string folder, StudyDefinition study)
+    {
+        string prefix = Path.TrimEndingDirectorySeparator(folder) + Path.DirectorySeparatorChar;
+        foreach (string file in StudyInputs.FilesOf(study).Select(input => input.Path).Append(study.Path))
+        {
+            if (file.StartsWith(prefix, StringComparison.Ordinal))
+            {
+                throw new RefusalException(
+                    "--out", $"the folder {folder} holds '{Path.GetFileName(file)}', which the run reads, and a run replaces the folder",
+                    "a folder of its own for the results", "Name another folder.");
+            }
+        }
+    }
 }
 
 /// <summary>What a warning does.</summary>
