@@ -32,8 +32,11 @@ public sealed record Capabilities
     /// <summary>Comparisons between visits.</summary>
     public IReadOnlySet<VisitContrast> Contrasts { get; init; } = new HashSet<VisitContrast>();
 
-    /// <summary>Those of <see cref="StudyKeys.Optional"/> that have an effect in this version.</summary>
+    /// <summary>Those of <see cref="StudyKeys.Optional"/> that have an effect in this version, whatever the design.</summary>
     public IReadOnlySet<string> Keys { get; init; } = new HashSet<string>();
+
+    /// <summary>Further keys of <see cref="StudyKeys.Optional"/> that have an effect in designs of a kind alone.</summary>
+    public IReadOnlyDictionary<DesignKind, IReadOnlyList<string>> KeysOfDesign { get; init; } = new Dictionary<DesignKind, IReadOnlyList<string>>();
 
     /// <summary>The whole language of the study file, as the published schema describes it.</summary>
     public static Capabilities Everything { get; } = new()
@@ -49,6 +52,10 @@ public sealed record Capabilities
         Contrasts = Enum.GetValues<VisitContrast>().ToHashSet(),
         Keys = StudyKeys.Optional.ToHashSet(),
     };
+
+    /// <summary>What is available in a kind of design: its keys count as keys of every design.</summary>
+    public Capabilities For(DesignKind design) =>
+        KeysOfDesign.TryGetValue(design, out var keys) ? this with { Keys = Keys.Concat(keys).ToHashSet() } : this;
 
     /// <summary>The methods for a kind of endpoint in a kind of design; empty where there are none.</summary>
     public IReadOnlyList<string> MethodsFor(DesignKind design, EndpointKind endpoint) =>

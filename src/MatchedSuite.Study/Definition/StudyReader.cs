@@ -26,6 +26,8 @@ public static class StudyReader
         Section root = Section.Root(file, NodeTree.Parse(text, file));
         Version(root);
         Section study = root.RequiredInner("study");
+        DesignSection design = DesignReading.Read(root.RequiredInner("design"), available);
+        Capabilities ofDesign = available.For(design.Kind);
         var definition = new StudyDefinition
         {
             Path = full,
@@ -35,14 +37,14 @@ public static class StudyReader
             Question = study.Text("question", "the question the study asks"),
             Seed = study.Whole("seed", 0, long.MaxValue) ?? 1,
             Data = DataReading.Read(root.RequiredInner("data"), folder, available),
-            Design = DesignReading.Read(root.RequiredInner("design"), available),
-            Endpoints = EndpointsReading.Read(root.Inner("endpoints"), folder, available),
+            Design = design,
+            Endpoints = EndpointsReading.Read(root.Inner("endpoints"), folder, ofDesign),
             Gates = OutputReading.Gates(root.Inner("gates")),
             Output = new OutputSection { Folder = folder },
         };
         definition = definition with
         {
-            Analysis = AnalysisReading.Read(root.Inner("analysis"), definition.Design, available),
+            Analysis = AnalysisReading.Read(root.Inner("analysis"), design, ofDesign),
             Output = OutputReading.Output(root, folder, Inputs(definition)),
         };
         StudyRules.Check(root, definition);

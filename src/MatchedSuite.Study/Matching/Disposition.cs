@@ -21,13 +21,13 @@ public enum Disposition
     /// <summary>The person already stands in another set.</summary>
     PersonInTwoSets,
 
-    /// <summary>Another sample, earlier in the sheet, already stands in this place of the set.</summary>
+    /// <summary>Another sample, earlier in the sheet, already stands in this place of the set; in matched sets: another of the same person.</summary>
     DuplicatePlace,
 
     /// <summary>The set lacks the other role.</summary>
     NoPartner,
 
-    /// <summary>The set breaks a promise of the matching and such sets are dropped.</summary>
+    /// <summary>The set, in matched sets the reference person, breaks a promise of the matching and such are dropped.</summary>
     OutsideTolerance,
 
     /// <summary>The set's stratum is empty or its members disagree on it.</summary>

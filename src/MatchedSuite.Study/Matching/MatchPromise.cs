@@ -3,7 +3,7 @@ using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Study.Matching;
 
-/// <summary>One promise of the matching held against the complete pairs.</summary>
+/// <summary>One promise of the matching held against the complete sets.</summary>
 internal sealed class MatchPromise
 {
     // Decimals such as 31.3 − 29.3 leave a few units in the last place; a limit must not be broken by them.
@@ -30,52 +30,58 @@ internal sealed class MatchPromise
     public string Promise =>
         _rule.Within is { } within ? string.Create(CultureInfo.InvariantCulture, $"within {within}") : "equal";
 
-    /// <summary>The breach of a complete set; null where it keeps the promise or a side is missing.</summary>
-    public ToleranceBreach? BreachOf(PairMembers set)
+    /// <summary>The breaches of a complete set, one for each index person with each reference person who do not match.</summary>
+    public IEnumerable<ToleranceBreach> BreachesOf(SetPeople set) =>
+        set.Index.SelectMany(index => set.Reference.Select(reference => BreachOf(set.Set, index, reference)).OfType<ToleranceBreach>());
+
+    /// <summary>The breach of two people of a set, each given by the rows of their samples; null where they match or one has no value.</summary>
+    public ToleranceBreach? BreachOf(string set, IReadOnlyList<int> indexPerson, IReadOnlyList<int> referencePerson)
     {
         if (_rule.Within is not { } within)
         {
-            return IsKnown(set) && !Agrees(set)
-                ? new ToleranceBreach(set.Set, _rule.Column, Categories(set.Index), Categories(set.Reference), Promise)
+            return HasValue(indexPerson) && HasValue(referencePerson) && !OneCategory(indexPerson.Concat(referencePerson))
+                ? new ToleranceBreach(set, _rule.Column, Categories(indexPerson), Categories(referencePerson), Promise)
                 : null;
         }
 
-        double index = MeanOf(set.Index);
-        double reference = MeanOf(set.Reference);
+        double index = MeanOf(indexPerson);
+        double reference = MeanOf(referencePerson);
         double larger = Math.Max(Math.Abs(index), Math.Abs(reference));
         double rounding = UnitsInLastPlace * (Math.BitIncrement(larger) - larger);
         return Math.Abs(index - reference) > within + rounding
-            ? new ToleranceBreach(set.Set, _rule.Column, Written(index), Written(reference), Promise)
+            ? new ToleranceBreach(set, _rule.Column, Written(index), Written(reference), Promise)
             : null;
     }
 
-    /// <summary>True where both sides of a set have a value.</summary>
-    public bool IsKnown(PairMembers set) => HasValue(set.Index) && HasValue(set.Reference);
+    /// <summary>True where every person of a set has a value.</summary>
+    public bool IsKnown(SetPeople set) => set.Everyone.All(HasValue);
 
-    /// <summary>The balance over sets.</summary>
-    public MatchBalance BalanceOf(IReadOnlyCollection<PairMembers> sets)
+    /// <summary>The balance over sets; a set is compared where some person of each role has a value.</summary>
+    public MatchBalance BalanceOf(IReadOnlyCollection<SetPeople> sets)
     {
-        PairMembers[] known = [.. sets.Where(IsKnown)];
+        SetPeople[] known = [.. sets.Where(set => set.Index.Any(HasValue) && set.Reference.Any(HasValue))];
         NumberBalance? numbers = _rule.Within is null || known.Length == 0
             ? null
-            : NumberBalance.Of([.. known.Select(set => MeanOf(set.Index))], [.. known.Select(set => MeanOf(set.Reference))]);
+            : NumberBalance.Of([.. known.Select(set => Numbers(set.Index))], [.. known.Select(set => Numbers(set.Reference))]);
         return new MatchBalance(_rule.Column, Promise, known.Length, sets.Count - known.Length, known.Count(Agrees), numbers);
     }
 
-    private bool HasValue(List<int> rows) => rows.Exists(row => _texts[row] is not null);
+    private bool HasValue(IReadOnlyList<int> person) => person.Any(row => _texts[row] is not null);
 
-    private bool Agrees(PairMembers set) =>
-        _rule.Within is null
-            ? set.Rows.Select(row => _texts[row]).OfType<string>().Distinct().Count() == 1
-            : MeanOf(set.Index) == MeanOf(set.Reference);
+    private bool Agrees(SetPeople set) =>
+        _rule.Within is null ? OneCategory(set.Everyone.SelectMany(rows => rows)) : Numbers(set.Everyone).Distinct().Count() == 1;
 
-    private double MeanOf(List<int> rows)
+    private bool OneCategory(IEnumerable<int> rows) => rows.Select(row => _texts[row]).OfType<string>().Distinct().Count() == 1;
+
+    private double[] Numbers(IEnumerable<IReadOnlyList<int>> people) => [.. people.Select(MeanOf).Where(value => !double.IsNaN(value))];
+
+    private double MeanOf(IReadOnlyList<int> person)
     {
-        double[] known = [.. rows.Select(row => _numbers[row]).Where(value => !double.IsNaN(value))];
+        double[] known = [.. person.Select(row => _numbers[row]).Where(value => !double.IsNaN(value))];
         return known.Length == 0 ? double.NaN : known.Sum() / known.Length;
     }
 
-    private string Categories(List<int> rows) => string.Join(", ", rows.Select(row => _texts[row]).OfType<string>().Distinct());
+    private string Categories(IReadOnlyList<int> rows) => string.Join(", ", rows.Select(row => _texts[row]).OfType<string>().Distinct());
 
     private static string Written(double value) => value.ToString(CultureInfo.InvariantCulture);
 }

@@ -50,6 +50,7 @@ public sealed record MatchingAudit
         study.Design switch
         {
             { Kind: DesignKind.Pairs } => new PairsAudit(study, sheet, measured).Run(),
+            { Kind: DesignKind.Sets } => new SetsAudit(study, sheet, measured).Run(),
             _ => throw new ArgumentException($"There is no audit for a design of kind '{WrittenName.Of(study.Design.Kind)}'.", nameof(study)),
         };
 }

@@ -9,21 +9,21 @@ internal static class PairArrangement
     /// <param name="pairs">Complete pairs, in order of first appearance.</param>
     /// <param name="groups">The two roles.</param>
     /// <param name="strata">Stratum of each row; null when the study has none.</param>
-    public static Arrangement Of(IReadOnlyList<PairMembers> pairs, TwoGroups groups, string?[]? strata)
+    public static Arrangement Of(IReadOnlyList<SetMembers> pairs, TwoGroups groups, string?[]? strata)
     {
         int[] rows = [.. pairs.SelectMany(pair => pair.Rows).Order()];
-        string[] names = strata is null ? [] : [.. pairs.Select(pair => strata[pair.Index[0]]!).Distinct().Order(StringComparer.Ordinal)];
+        var (names, ofSet) = RoleSets.Strata(pairs, strata);
         return new Arrangement
         {
             Rows = rows,
             Sets = [.. pairs.Select(pair => pair.Set)],
             Places = [PlaceOf(groups.Index, pairs, pair => pair.Index, rows), PlaceOf(groups.Reference, pairs, pair => pair.Reference, rows)],
             Strata = names,
-            StratumOfSet = strata is null ? [] : [.. pairs.Select(pair => Array.IndexOf(names, strata[pair.Index[0]]))],
+            StratumOfSet = ofSet,
         };
     }
 
-    private static Place PlaceOf(string name, IReadOnlyList<PairMembers> pairs, Func<PairMembers, List<int>> side, int[] rows)
+    private static Place PlaceOf(string name, IReadOnlyList<SetMembers> pairs, Func<SetMembers, List<int>> side, int[] rows)
     {
         int[] samples = [.. pairs.SelectMany(side).Select(row => Array.BinarySearch(rows, row))];
         if (pairs.All(pair => side(pair).Count == 1))

@@ -12,10 +12,16 @@ public sealed class SheetNumbers
 
     /// <summary>Numbers of the rows that an arrangement uses, in its order.</summary>
     public SheetNumbers(TextTable sheet, TextDialect dialect, Arrangement arrangement)
+        : this(sheet, dialect, arrangement.Rows)
+    {
+    }
+
+    /// <summary>Numbers of some rows of the sheet, in the order in which they are named.</summary>
+    public SheetNumbers(TextTable sheet, TextDialect dialect, int[] rows)
     {
         _sheet = sheet;
         _dialect = dialect;
-        _rows = arrangement.Rows;
+        _rows = rows;
     }
 
     /// <summary>One number a used sample; NaN where the cell is missing.</summary>

@@ -21,6 +21,10 @@ internal static class Audits
         gates: { {{gates}} }
         """;
 
+    /// <summary>A study of matched sets with places for more keys of the design and the gates.</summary>
+    public static string Sets(string design = "", string gates = "", string data = "") =>
+        Pairs(design, gates, data).With("kind: pairs", "kind: sets").With("name: Pairs", "name: Sets");
+
     public static MatchingAudit Of(string study, string sheet, params string[]? measured)
     {
         using var folder = new StudyFolder();

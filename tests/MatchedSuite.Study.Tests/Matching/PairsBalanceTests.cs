@@ -88,10 +88,10 @@ public class PairsBalanceTests
     [Fact]
     public void A_single_pair_has_no_spread()
     {
-        NumberBalance numbers = NumberBalance.Of([3], [2]);
+        NumberBalance numbers = NumberBalance.Of([[3]], [[2]]);
         Assert.True(double.IsNaN(numbers.IndexSd));
         Assert.True(double.IsNaN(numbers.StandardisedDifference));
-        Assert.Equal(0, NumberBalance.Of([3, 3], [3, 3]).StandardisedDifference);
+        Assert.Equal(0, NumberBalance.Of([[3], [3]], [[3], [3]]).StandardisedDifference);
     }
 
     [Fact]

@@ -43,9 +43,11 @@ internal static class Availability
         if (!asks || !section.Has(key) || capabilities.Keys.Contains(path))
             return;
         string[] here = [.. StudyKeys.Optional.Where(capabilities.Keys.Contains)];
+        string[] designs = [.. capabilities.KeysOfDesign.Where(of => of.Value.Contains(path)).Select(of => WrittenName.Of(of.Key))];
+        string elsewhere = designs.Length == 0 ? "" : $" for this kind of design, only for {Listing.Of(designs)}";
         throw section.RefuseKey(
             key,
-            $"'{path}' is not available in this version",
+            $"'{path}' is not available in this version{elsewhere}",
             here.Length == 0 ? "a study without it" : $"a study without it; of the optional keys this version has {Listing.Of(here)}",
             "Remove the key.");
     }

@@ -12,6 +12,7 @@ internal static class DesignReading
         DesignKind kind = section.Choice<DesignKind>("kind")
             ?? throw section.Absent("kind", "one of " + Listing.Of(WrittenName.All<DesignKind>()));
         section.Available("kind", kind, capabilities.Designs);
+        capabilities = capabilities.For(kind);
         DesignRules.KeysOfKind(section, kind);
         var design = new DesignSection
         {

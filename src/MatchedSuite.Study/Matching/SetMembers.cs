@@ -2,7 +2,7 @@ namespace MatchedSuite.Study.Matching;
 
 /// <summary>The rows of one set that stand in its two roles, in sheet order.</summary>
 /// <param name="Set">Name of the set.</param>
-internal sealed record PairMembers(string Set)
+internal sealed record SetMembers(string Set)
 {
     /// <summary>Rows in the index role.</summary>
     public List<int> Index { get; } = [];
