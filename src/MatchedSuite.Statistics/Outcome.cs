@@ -32,4 +32,7 @@ public enum Outcome
 
     /// <summary>More distinct codes than an ordinal endpoint may have: it is measured, not graded.</summary>
     TooManyCategories,
+
+    /// <summary>The reference values do not vary, so no estimate can be given per their standard deviation.</summary>
+    NoReferenceSpread,
 }

@@ -75,4 +75,10 @@ public enum Remarks : long
 
     /// <summary>More distinct codes than an ordinal endpoint may have; no test was made.</summary>
     TooManyCategories = 1 << 22,
+
+    /// <summary>Some people serve in several sets, so that the sets are not independent.</summary>
+    ReusedControls = 1 << 23,
+
+    /// <summary>The reference values do not vary, so no estimate can be given per their standard deviation; no test was made.</summary>
+    NoReferenceSpread = 1 << 24,
 }

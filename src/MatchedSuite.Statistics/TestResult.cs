@@ -56,6 +56,7 @@ public readonly record struct TestResult()
         Outcome.NotConverged => Remarks.NotConverged,
         Outcome.TooFewEndpoints => Remarks.TooFewEndpoints,
         Outcome.TooManyCategories => Remarks.TooManyCategories,
+        Outcome.NoReferenceSpread => Remarks.NoReferenceSpread,
         _ => Remarks.None,
     };
 }

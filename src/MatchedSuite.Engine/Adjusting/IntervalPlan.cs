@@ -22,7 +22,7 @@ internal sealed class IntervalPlan
         _table = table;
         _columns = columns;
         AnalysisSection analysis = plan.Study.Analysis;
-        Kinds = analysis.Intervals;
+        Kinds = analysis.IntervalsOverEndpoints;
         _rate = analysis.Fdr;
         _selecting = plan.Adjustments.ToList().FindIndex(adjustment => adjustment.Controls == ErrorRate.FalseDiscovery);
         _coverage = PerGroup(IntervalKind.Fcr, group => group.Rejected[_selecting] is > 0 and { } discoveries

@@ -19,7 +19,7 @@ internal sealed class RowAdjuster
         _plan = plan;
         _table = table;
         _traits = traits;
-        Columns = new AdjustedColumns(plan.Adjustments.Count, table.P.Length, plan.Study.Analysis.Intervals, table.Groups);
+        Columns = new AdjustedColumns(plan.Adjustments.Count, table.P.Length, plan.Study.Analysis.IntervalsOverEndpoints, table.Groups);
     }
 
     /// <summary>The adjusted p-values so far.</summary>

@@ -1,6 +1,7 @@
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics;
+using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Endpoints;
 
 namespace MatchedSuite.Engine.Evaluation;
@@ -52,6 +53,15 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
 
     /// <summary>Adds the endpoint's rows and details, and says how many of its values had no transform.</summary>
     protected abstract void AddRows(Span<double> values, EndpointInfo endpoint, BlockOutput output, out int undefined);
+
+    /// <summary>Brings values to the analysis scale in place, and says how many had no transform.</summary>
+    protected int Transformed(Transform transform, Span<double> values)
+    {
+        if (transform != Transform.RankNormal)
+            return ValueTransform.Apply(transform, values);
+        RankNormalScores.Of(values, values, Scratch);
+        return 0;
+    }
 
     /// <summary>Why an endpoint with so few or so incomplete sets is not tested; null where it is.</summary>
     /// <param name="designed">Sets that the matching gives.</param>

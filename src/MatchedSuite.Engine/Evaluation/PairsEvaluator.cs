@@ -70,14 +70,6 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         return undefined;
     }
 
-    private int Transformed(Transform transform, Span<double> values)
-    {
-        if (transform != Transform.RankNormal)
-            return ValueTransform.Apply(transform, values);
-        RankNormalScores.Of(values, values, Scratch);
-        return 0;
-    }
-
     // All sets first, then each stratum, then the comparison between strata.
     private void AddMethod(
         ReadOnlySpan<double> index, ReadOnlySpan<double> reference, PairContrast places, PlannedMethod planned, EndpointInfo endpoint, BlockOutput output)
@@ -101,7 +93,7 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         }
 
         if (_strata.Count > 1 && planned.Method.Strata != StrataComparison.None)
-            _between.AddRow(planned.Method.Strata, output.Rows);
+            _between.Fill(planned.Method.Strata, ref output.Rows.Add());
         foreach (ref ResultRow row in output.Rows.Records[before..])
         {
             row.Method = planned.Code;
@@ -139,8 +131,8 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         Span<double> reference = frame.Doubles(places.Index.Sets);
         places.Index.Gather(above, index);
         places.Reference.Gather(above, reference);
-        var (belowIndex, knownIndex) = CountBelow(index);
-        var (belowReference, knownReference) = CountBelow(reference);
+        var (belowIndex, knownIndex) = BelowCount.Of(index);
+        var (belowReference, knownReference) = BelowCount.Of(reference);
         PairDetails.AddNumber(output.Details, ResultRow.AllStrata, Quantity.IndexBelowLimit, belowIndex);
         PairDetails.AddNumber(output.Details, ResultRow.AllStrata, Quantity.ReferenceBelowLimit, belowReference);
         if (2 * (belowIndex + belowReference) <= knownIndex + knownReference)
@@ -148,22 +140,5 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         foreach (ref ResultRow row in output.Rows.Records[rowsBefore..])
             row.Remarks |= Remarks.MostlyBelowLimit;
         AddMethod(index, reference, places, _design.AboveBelow!, endpoint with { Kind = EndpointKind.Binary, Transform = Transform.None }, output);
-    }
-
-    // A mean of replicates on both sides of the limit counts as above from one half on.
-    private static (int Below, int Known) CountBelow(Span<double> above)
-    {
-        int below = 0;
-        int known = 0;
-        foreach (ref double value in above)
-        {
-            if (double.IsNaN(value))
-                continue;
-            value = value < 0.5 ? 0 : 1;
-            known++;
-            below += value == 0 ? 1 : 0;
-        }
-
-        return (below, known);
     }
 }

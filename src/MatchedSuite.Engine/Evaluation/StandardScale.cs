@@ -20,11 +20,12 @@ internal static class StandardScale
             if (deviation > 0)
                 row.DivideBy(deviation);
             else
-                row.Take(TestResult.Untested(Outcome.NoVariation, row.Sets, row.Samples));
+                row.Take(TestResult.Untested(Outcome.NoReferenceSpread, row.Sets, row.Samples));
         }
     }
 
-    private static double DeviationOf(ReadOnlySpan<double> values, Scratch scratch)
+    /// <summary>Standard deviation, with n − 1, of the values that are there; NaN for fewer than two.</summary>
+    public static double DeviationOf(ReadOnlySpan<double> values, Scratch scratch)
     {
         using Scratch.Frame frame = scratch.Open();
         Span<double> known = frame.Doubles(values.Length);

@@ -25,15 +25,21 @@ internal sealed class StrataRows(int strata, TestOptions options)
     /// <summary>Keeps one stratum's result.</summary>
     public void Keep(short stratum, in TestResult result, in PairSample pairs, EndpointKind kind)
     {
-        _results[stratum] = result;
+        Keep(stratum, result);
         if (kind == EndpointKind.Binary)
             _tables[stratum] = PairedTable.Of(pairs);
+    }
+
+    /// <summary>Keeps one stratum's result where no table of pairs belongs to it.</summary>
+    public void Keep(short stratum, in TestResult result)
+    {
+        _results[stratum] = result;
         _sets += result.Sets;
         _samples += result.Samples;
     }
 
-    /// <summary>Adds the row of the comparison.</summary>
-    public void AddRow(StrataComparison comparison, RecordBuffer<ResultRow> rows)
+    /// <summary>Fills the row of the comparison.</summary>
+    public void Fill(StrataComparison comparison, ref ResultRow row)
     {
         TestResult result = comparison switch
         {
@@ -41,7 +47,6 @@ internal sealed class StrataRows(int strata, TestOptions options)
             StrataComparison.Means => StratumDifference.OfMeans(_results, options),
             _ => StratumDifference.OfEstimates(_results, options),
         };
-        ref ResultRow row = ref rows.Add();
         row.Stratum = ResultRow.BetweenStrata;
         row.Take(result);
         row.Sets = _sets;

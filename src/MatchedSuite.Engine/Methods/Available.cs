@@ -18,11 +18,12 @@ public static class Available
         Transforms = Enum.GetValues<Transform>().ToHashSet(),
         Families = Enum.GetValues<FamilyRule>().ToHashSet(),
         Intervals = new HashSet<IntervalKind> { IntervalKind.Fcr, IntervalKind.Simultaneous },
+        IntervalsOfDesign = DesignTable.All.ToDictionary(design => design.Kind, design => design.Intervals),
         Keys = new HashSet<string>
         {
-            "design.exposure", "design.stratum", "design.covariates", "design.person-time",
-            "endpoints.below-limit", "endpoints.scale", "analysis.zeros", "analysis.across", "analysis.intervals",
+            "design.stratum", "design.covariates", "endpoints.below-limit", "endpoints.scale", "analysis.across", "analysis.intervals",
         },
+        KeysOfDesign = DesignTable.All.ToDictionary(design => design.Kind, design => design.Keys),
     };
 
     private static Dictionary<(DesignKind Design, EndpointKind Endpoint), IReadOnlyList<string>> ByDesignAndKind(

@@ -16,6 +16,7 @@ public static class UntestedReason
             CultureInfo.InvariantCulture, $"a larger share of sets lacks a value than gates.missing-at-most ({study.Gates.MissingAtMost:P0}) allows"),
         Outcome.NoVariation => "every difference is the same, so there is no spread to judge its mean by",
         Outcome.NothingDiffers => "no set differs between the roles, so nothing points in a direction",
+        Outcome.NoReferenceSpread => "the values of the reference role do not vary, so their standard deviation is no unit (endpoints.scale: sd)",
         Outcome.Collinear => "the covariates determine the endpoint or the comparison within every set",
         Outcome.NotConverged => "the likelihood could not be maximised to the accuracy that is promised",
         Outcome.TooFewEndpoints => "the family has too few endpoints to learn a common variance from",

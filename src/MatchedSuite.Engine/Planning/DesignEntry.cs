@@ -13,4 +13,10 @@ public sealed record DesignEntry(
 {
     /// <summary>How a method takes part in adjustments by sign flips; null where it cannot.</summary>
     public Func<string, FlipRule?> FlipOf { get; init; } = _ => null;
+
+    /// <summary>Optional keys of the study file that have an effect in this kind of design beside those of every kind.</summary>
+    public IReadOnlyList<string> Keys { get; init; } = [];
+
+    /// <summary>Intervals beside the marginal ones that this kind of design has beside those of every kind.</summary>
+    public IReadOnlyList<IntervalKind> Intervals { get; init; } = [];
 }

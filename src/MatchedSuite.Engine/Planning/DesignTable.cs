@@ -10,7 +10,16 @@ public static class DesignTable
     /// <summary>Every kind.</summary>
     public static IReadOnlyList<DesignEntry> All { get; } =
     [
-        new(DesignKind.Pairs, inputs => new PairsDesign(inputs), PairMethodTable.NamesFor) { FlipOf = name => PairMethodTable.Named(name).Flips },
+        new(DesignKind.Pairs, inputs => new PairsDesign(inputs), PairMethodTable.NamesFor)
+        {
+            FlipOf = name => PairMethodTable.Named(name).Flips,
+            Keys = ["design.exposure", "design.person-time", "analysis.zeros"],
+        },
+        new(DesignKind.Sets, inputs => new SetsDesign(inputs), SetMethodTable.NamesFor)
+        {
+            Keys = ["design.reuse"],
+            Intervals = [IntervalKind.Profile],
+        },
     ];
 
     /// <summary>The entry of a study's kind of design.</summary>

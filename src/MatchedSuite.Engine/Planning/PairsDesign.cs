@@ -31,8 +31,7 @@ public sealed class PairsDesign : IDesign
             of => of.Value.Select((name, position) => Planned(name, position == 0)).ToArray());
         if (inputs.Catalogue.HasDetectionLimits)
             AboveBelow = Planned(AboveBelowMethod, isPrimary: false);
-        Warnings = [.. Comparisons[0].Columns.CollinearNames().Select(name =>
-            $"covariate '{name}' is the same within every set or follows from the others; results are not adjusted for it")];
+        Warnings = [.. Comparisons[0].Columns.CollinearNames().Select(CollinearWarning.Of)];
     }
 
     /// <summary>The comparisons, in output order.</summary>

@@ -44,4 +44,49 @@ public enum Quantity : short
 
     /// <summary>Its exact upper limit.</summary>
     IntraclassCorrelationHigh,
+
+    /// <summary>Standard deviation of the reference samples, the unit of estimates per standard deviation.</summary>
+    ReferenceSd,
+
+    /// <summary>Log-likelihood at the maximum.</summary>
+    LogLikelihood,
+
+    /// <summary>Log-likelihood of the covariates alone, without the endpoint.</summary>
+    LogLikelihoodWithout,
+
+    /// <summary>Likelihood-ratio statistic of the endpoint given the covariates, one degree of freedom.</summary>
+    LikelihoodRatio,
+
+    /// <summary>Its p-value.</summary>
+    LikelihoodRatioP,
+
+    /// <summary>Decimal logarithm of that.</summary>
+    LikelihoodRatioLog10P,
+
+    /// <summary>Score statistic of the endpoint given the covariates, one degree of freedom.</summary>
+    Score,
+
+    /// <summary>Its p-value.</summary>
+    ScoreP,
+
+    /// <summary>Decimal logarithm of that.</summary>
+    ScoreLog10P,
+
+    /// <summary>Lower profile-likelihood limit of the estimate.</summary>
+    ProfileLow,
+
+    /// <summary>Upper profile-likelihood limit of the estimate.</summary>
+    ProfileHigh,
+
+    /// <summary>Likelihood-ratio statistic of the levels of an ordinal endpoint as categories.</summary>
+    CategoriesLikelihoodRatio,
+
+    /// <summary>Its degrees of freedom.</summary>
+    CategoriesDf,
+
+    /// <summary>Its p-value.</summary>
+    CategoriesP,
+
+    /// <summary>Decimal logarithm of that.</summary>
+    CategoriesLog10P,
 }

@@ -140,7 +140,7 @@ public sealed class AnalysisRun
             _execution.StepDone("resampling");
         }
 
-        if (_study.Analysis.Intervals.Count > 0)
+        if (_study.Analysis.IntervalsOverEndpoints.Count > 0)
         {
             _observer.Step("finding intervals for the discoveries");
             var wanted = new IntervalPlan(plan, table, adjuster.Columns);

@@ -71,6 +71,9 @@ public sealed class StudyInputs : IDisposable
     /// <summary>Columns of the sheet as numbers over the used samples.</summary>
     public SheetNumbers Numbers => new(Sheet, Study.Data.Dialect, Audit.Arrangement);
 
+    /// <summary>Columns of the sheet as numbers over some of its rows.</summary>
+    public SheetNumbers NumbersOf(int[] rows) => new(Sheet, Study.Data.Dialect, rows);
+
     /// <summary>Where the used samples stand in the file of measurements, in the order of the arrangement's rows.</summary>
     public int[] SourceColumns()
     {

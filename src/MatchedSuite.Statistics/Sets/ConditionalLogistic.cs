@@ -1,5 +1,3 @@
-using MatchedSuite.Statistics.Distributions;
-
 namespace MatchedSuite.Statistics.Sets;
 
 /// <summary>Conditional logistic regression: does the endpoint differ between the roles within matched sets?</summary>
@@ -21,26 +19,7 @@ public static class ConditionalLogistic
     /// <param name="sets">The endpoint on its sets, with covariates if any.</param>
     /// <param name="options">Sides and confidence.</param>
     /// <param name="scratch">Working memory of this thread.</param>
-    public static TestResult Run(in SetSample sets, TestOptions options, Scratch scratch)
-    {
-        ConditionalLogisticFit fit = Fit(sets, options, scratch);
-        if (fit.Outcome != Outcome.Tested)
-            return TestResult.Untested(fit.Outcome, fit.Sets, fit.Samples, fit.Remarks);
-        double z = double.IsNaN(fit.StandardError)
-            ? Math.CopySign(Math.Sqrt(fit.LikelihoodRatio.Statistic), fit.Estimate)
-            : fit.Estimate / fit.StandardError;
-        return new TestResult
-        {
-            Sets = fit.Sets,
-            Samples = fit.Samples,
-            Estimate = fit.Estimate,
-            StandardError = fit.StandardError,
-            Interval = fit.Interval,
-            Statistic = z,
-            P = Tails.ForSides(options.Sides, StandardNormal.LowerTail(z), StandardNormal.UpperTail(z)),
-            Remarks = fit.Remarks,
-        };
-    }
+    public static TestResult Run(in SetSample sets, TestOptions options, Scratch scratch) => Fit(sets, options, scratch).Test(options.Sides);
 
     /// <summary>Fits one endpoint and keeps the log-likelihoods and all three tests.</summary>
     /// <param name="sets">The endpoint on its sets, with covariates if any.</param>

@@ -1,3 +1,5 @@
+using MatchedSuite.Statistics.Distributions;
+
 namespace MatchedSuite.Statistics.Sets;
 
 /// <summary>A conditional logistic model fitted to matched sets. Numbers that are not defined are NaN.</summary>
@@ -60,4 +62,24 @@ public readonly record struct ConditionalLogisticFit()
 
     /// <summary>Remarks for the reader.</summary>
     public Remarks Remarks { get; init; }
+
+    /// <summary>The endpoint's test: Wald's z, or the signed root of the likelihood ratio where the estimate has no standard error.</summary>
+    /// <param name="sides">Direction of the alternative.</param>
+    public TestResult Test(Sides sides)
+    {
+        if (Outcome != Outcome.Tested)
+            return TestResult.Untested(Outcome, Sets, Samples, Remarks);
+        double z = double.IsNaN(StandardError) ? Math.CopySign(Math.Sqrt(LikelihoodRatio.Statistic), Estimate) : Estimate / StandardError;
+        return new TestResult
+        {
+            Sets = Sets,
+            Samples = Samples,
+            Estimate = Estimate,
+            StandardError = StandardError,
+            Interval = Interval,
+            Statistic = z,
+            P = Tails.ForSides(sides, StandardNormal.LowerTail(z), StandardNormal.UpperTail(z)),
+            Remarks = Remarks,
+        };
+    }
 }

@@ -73,16 +73,7 @@ internal readonly ref struct WithinSetRegression
     {
         int members = sets.Members;
         Span<double> kept = frame.Doubles(members * sets.CovariateCount);
-        int covariates = 0;
-        for (int c = 0; c < sets.CovariateCount; c++)
-        {
-            Span<double> column = kept.Slice(covariates * members, members);
-            sets.Covariate(c).CopyTo(column);
-            Centre(column, sets.Starts);
-            if (MakeOrthogonal(column, kept[..(covariates * members)]) > 0)
-                covariates++;
-        }
-
+        int covariates = TakeCovariates(sets, kept, frame.Integers(sets.CovariateCount));
         kept = kept[..(covariates * members)];
         Span<double> role = frame.Doubles(members);
         role.Clear();
@@ -113,6 +104,26 @@ internal readonly ref struct WithinSetRegression
             DegreesOfFreedom = df,
             Remarks = covariates < sets.CovariateCount ? Remarks.CollinearCovariate : Remarks.None,
         };
+    }
+
+    /// <summary>Centres the covariates within sets and makes each orthogonal to those in front of it; those that leave nothing are left out.</summary>
+    /// <param name="sets">Sets with covariates.</param>
+    /// <param name="kept">Receives the columns, one after another.</param>
+    /// <param name="independent">Receives their positions.</param>
+    /// <returns>How many were kept.</returns>
+    public static int TakeCovariates(in SetSample sets, Span<double> kept, Span<int> independent)
+    {
+        int covariates = 0;
+        for (int c = 0; c < sets.CovariateCount; c++)
+        {
+            Span<double> column = kept.Slice(covariates * sets.Members, sets.Members);
+            sets.Covariate(c).CopyTo(column);
+            Centre(column, sets.Starts);
+            if (MakeOrthogonal(column, kept[..(covariates * sets.Members)]) > 0)
+                independent[covariates++] = c;
+        }
+
+        return covariates;
     }
 
     /// <summary>Refers the estimate over a standard error to Student's t.</summary>

@@ -39,6 +39,9 @@ public sealed record AnalysisSection
     /// <summary>Intervals given beside the marginal ones.</summary>
     public IReadOnlyList<IntervalKind> Intervals { get; init; } = [];
 
+    /// <summary>Those of them whose confidence depends on how many endpoints there are.</summary>
+    public IReadOnlyList<IntervalKind> IntervalsOverEndpoints => [.. Intervals.Where(kind => kind != IntervalKind.Profile)];
+
     /// <summary>True where the hypotheses of all contrasts are adjusted together.</summary>
     public bool AcrossContrasts { get; init; }
 

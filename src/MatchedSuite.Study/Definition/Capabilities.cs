@@ -29,6 +29,9 @@ public sealed record Capabilities
     /// <summary>Intervals beside the marginal ones.</summary>
     public IReadOnlySet<IntervalKind> Intervals { get; init; } = new HashSet<IntervalKind>();
 
+    /// <summary>Further intervals that designs of a kind alone have.</summary>
+    public IReadOnlyDictionary<DesignKind, IReadOnlyList<IntervalKind>> IntervalsOfDesign { get; init; } = new Dictionary<DesignKind, IReadOnlyList<IntervalKind>>();
+
     /// <summary>Comparisons between visits.</summary>
     public IReadOnlySet<VisitContrast> Contrasts { get; init; } = new HashSet<VisitContrast>();
 
@@ -53,9 +56,13 @@ public sealed record Capabilities
         Keys = StudyKeys.Optional.ToHashSet(),
     };
 
-    /// <summary>What is available in a kind of design: its keys count as keys of every design.</summary>
+    /// <summary>What is available in a kind of design: its own keys and intervals count as those of every design.</summary>
     public Capabilities For(DesignKind design) =>
-        KeysOfDesign.TryGetValue(design, out var keys) ? this with { Keys = Keys.Concat(keys).ToHashSet() } : this;
+        this with
+        {
+            Keys = Keys.Concat(KeysOfDesign.TryGetValue(design, out var keys) ? keys : []).ToHashSet(),
+            Intervals = Intervals.Concat(IntervalsOfDesign.TryGetValue(design, out var intervals) ? intervals : []).ToHashSet(),
+        };
 
     /// <summary>The methods for a kind of endpoint in a kind of design; empty where there are none.</summary>
     public IReadOnlyList<string> MethodsFor(DesignKind design, EndpointKind endpoint) =>
