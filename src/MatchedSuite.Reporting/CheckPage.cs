@@ -20,6 +20,10 @@ public static class CheckPage
         };
         if (study.Design.Role is { } role)
             lines.Add(("contrast", $"{role.Column}: '{role.Index}' compared with '{role.Reference}' within {study.Design.Set}"));
+        if (study.Design.Stratum is { } stratum)
+            lines.Add(("strata", stratum));
+        if (study.Design.Covariates.Count > 0)
+            lines.Add(("covariates", string.Join(", ", study.Design.Covariates)));
         foreach (var (kind, methods) in study.Analysis.Methods.OrderBy(of => of.Key))
             lines.Add(($"{WrittenName.Of(kind)} endpoints", string.Join(", ", methods)));
         lines.Add(("adjustments", $"{string.Join(", ", study.Analysis.Adjust)} over {WrittenName.Of(study.Analysis.Family)}"));

@@ -2,7 +2,6 @@ using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Output;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Engine.Running;
-using MatchedSuite.Study.Definition;
 using Microsoft.Data.Analysis;
 
 namespace MatchedSuite.Reporting;
@@ -25,7 +24,7 @@ internal static class SummaryFrame
             row => double.IsNaN(row.Row.Low)
                 ? "–"
                 : $"{NumberText.Quantity(Shown(row, row.Row.Low))} to {NumberText.Quantity(Shown(row, row.Row.High))}"));
-        columns.Add(Text("scale", top, ScaleOf));
+        columns.Add(Text("scale", top, row => ScaleText.Of(row, run.Plan.Study.Endpoints)));
         columns.Add(Text("p", top, row => NumberText.P(row.Row.P)));
         for (int i = 0; i < run.Plan.Adjustments.Count; i++)
         {
@@ -43,23 +42,10 @@ internal static class SummaryFrame
 
     private static string IntervalName(FinishedRun run) => $"{NumberText.Percent(run.Plan.Options.Confidence)} interval";
 
-    private static readonly Dictionary<EndpointKind, string> RatioNames = new()
-    {
-        [EndpointKind.Binary] = "odds ratio",
-        [EndpointKind.Count] = "rate ratio",
-    };
-
     // Logarithms are shown as the ratio they stand for.
     private static double Shown(SummaryRow row, double value)
     {
         var scale = (LogBase)row.Row.LogBase;
         return scale == LogBase.None ? value : Ratio.Of(value, scale);
-    }
-
-    private static string ScaleOf(SummaryRow row)
-    {
-        if ((LogBase)row.Row.LogBase != LogBase.None)
-            return RatioNames.GetValueOrDefault(row.Endpoint.Kind, "ratio");
-        return row.Endpoint.Unit is { Length: > 0 } unit ? $"difference, {unit}" : "difference";
     }
 }

@@ -16,7 +16,7 @@ internal static class SummaryPage
         foreach (string sentence in RunSentences.Of(run))
             page.Append("- ").Append(sentence).Append('\n');
         page.Append("\n## Smallest p-values\n\n").Append(FrameText.Markdown(SummaryFrame.Of(run)));
-        page.Append("\nA star marks what an adjustment finds. An effect is index minus reference, or index over reference on a ratio scale; ")
+        page.Append("\nA star marks what an adjustment finds. An effect is index minus reference, or index over reference on a ratio scale; an odds ratio per unit is that of the index role; ")
             .Append("`summary.csv` has every endpoint, `results.parquet` every method with all digits.\n");
         AddList(page, "Warnings", run.Warnings);
         AddList(page, "Cautions", run.Cautions);

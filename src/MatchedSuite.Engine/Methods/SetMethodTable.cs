@@ -18,7 +18,7 @@ public static class SetMethodTable
     /// <summary>Every method, the usual first choice of a kind before the others.</summary>
     public static IReadOnlyList<SetMethod> All { get; } =
     [
-        new("conditional-logistic", Any, EstimateScale.NaturalLog, StrataComparison.Estimates, ConditionalLogisticDetails.Test) { Extras = ConditionalLogisticDetails.Extras },
+        new(KnownNames.ConditionalLogistic, Any, EstimateScale.NaturalLog, StrataComparison.Estimates, ConditionalLogisticDetails.Test) { Extras = ConditionalLogisticDetails.Extras },
         Plain("within-set-linear", Continuous, EstimateScale.Analysis, StrataComparison.Means, WithinSetLinear.Run),
         Plain("within-set-robust", Continuous, EstimateScale.Analysis, StrataComparison.Means, WithinSetRobust.Run),
         Plain("aligned-rank", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, AlignedRank.Run),

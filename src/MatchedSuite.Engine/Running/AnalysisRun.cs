@@ -122,7 +122,7 @@ public sealed class AnalysisRun
             Guaranteed = guaranteed,
             Top = tables.Top(summary, _study.Output.Top),
             Warnings = _warnings,
-            Cautions = Cautions.For(_study, summary.SomeMissing),
+            Cautions = Cautions.For(_study, plan.Arrangement, summary.SomeMissing),
         };
     }
 

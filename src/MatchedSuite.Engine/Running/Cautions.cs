@@ -1,4 +1,5 @@
 using MatchedSuite.Study.Definition;
+using MatchedSuite.Study.Matching;
 
 namespace MatchedSuite.Engine.Running;
 
@@ -16,16 +17,40 @@ internal static class Cautions
         "Both samples of a set come from the same person: a change without a control group may be time itself, ageing, season or the "
         + "regression of extreme values, whatever the treatment.";
 
+    private const string MatchedSets =
+        "Odds ratios are within matched sets and hold for members of one set; they estimate a relative risk only where the outcome is rare or "
+        + "the controls were sampled at the cases' times.";
+
+    private const string MatchedOn =
+        "What the sets were matched on cannot be estimated from them, and matching on a consequence of the disease or the exposure hides part of the difference.";
+
+    private const string AfterTheFact =
+        "A sample taken after the diagnosis may show the disease or its treatment, not what came before it.";
+
+    private const string ReusedControls =
+        "Some people serve in several sets: the sets are not independent, so standard errors and p-values are somewhat too small.";
+
+    private const string MembersMissing =
+        "A member without the value leaves its set, and a set left without one of the roles leaves with it; this is fair only where values are missing for reasons unrelated to them.";
+
     private const string MissingValues =
         "A set without both values is left out for that endpoint; this is fair only where values are missing for reasons unrelated to them.";
 
     /// <summary>The cautions for a study, in the order in which they are printed.</summary>
-    public static IReadOnlyList<string> For(StudyDefinition study, bool someValuesMissing)
+    /// <param name="study">The study.</param>
+    /// <param name="arrangement">Who stands where.</param>
+    /// <param name="someValuesMissing">True where some set was left out for a missing value.</param>
+    public static IReadOnlyList<string> For(StudyDefinition study, Arrangement arrangement, bool someValuesMissing)
     {
         var cautions = new List<string> { Screen };
         cautions.Add(SamePerson(study.Design) ? BeforeAfter : Confounding);
+        bool isSets = study.Design.Kind == DesignKind.Sets;
+        if (isSets)
+            cautions.AddRange([MatchedSets, MatchedOn, AfterTheFact]);
+        if (arrangement.PeopleInSeveralSets > 0)
+            cautions.Add(ReusedControls);
         if (someValuesMissing)
-            cautions.Add(MissingValues);
+            cautions.Add(isSets ? MembersMissing : MissingValues);
         return cautions;
     }
 

@@ -31,7 +31,7 @@ public static class KnownNames
         new("stuart-maxwell", Codes, PairsAndVisits),
         new("bowker", Codes, PairsAndVisits),
         new("paired-poisson", Events, PairsAndVisits),
-        new("conditional-logistic", Any, [DesignKind.Sets, DesignKind.Pairs]),
+        new(ConditionalLogistic, Any, [DesignKind.Sets, DesignKind.Pairs]),
         new("within-set-linear", Measured, [DesignKind.Sets]),
         new("within-set-robust", Measured, [DesignKind.Sets]),
         new("aligned-rank", Ordered, [DesignKind.Sets]),
@@ -54,6 +54,9 @@ public static class KnownNames
 
     /// <summary>The one method for a measured exposure, and for nothing else.</summary>
     public const string WithinPairSlope = "within-pair-slope";
+
+    /// <summary>The method whose estimate is a log odds ratio per unit of the endpoint, whatever its kind.</summary>
+    public const string ConditionalLogistic = "conditional-logistic";
 
     /// <summary>Names of all methods.</summary>
     public static IReadOnlyList<string> Methods { get; } = [.. Catalogue.Select(method => method.Name)];
@@ -81,7 +84,7 @@ public static class KnownNames
             (DesignKind.Pairs or DesignKind.Visits, EndpointKind.Binary) => ["mcnemar-exact"],
             (DesignKind.Pairs or DesignKind.Visits, EndpointKind.Ordinal) => ["signed-rank"],
             (DesignKind.Pairs or DesignKind.Visits, EndpointKind.Count) => ["paired-poisson"],
-            (DesignKind.Sets, _) => ["conditional-logistic"],
+            (DesignKind.Sets, _) => [ConditionalLogistic],
             (DesignKind.ChangeByArm, EndpointKind.Continuous) => ["change-ancova", "change-welch"],
             (DesignKind.ChangeByArm, EndpointKind.Ordinal or EndpointKind.Count) => ["change-rank-sum"],
             (DesignKind.Crossover, EndpointKind.Continuous) => ["crossover-t"],
