@@ -29,6 +29,19 @@ public partial class PublishedFilesTests
     }
 
     [Fact]
+    public void The_template_for_sets_is_a_study_file_and_one_too_with_its_comments_taken_at_their_word()
+    {
+        StudyDefinition plain = StudyFolder.Read(Published("sets.yaml"));
+        Assert.Equal(DesignKind.Sets, plain.Design.Kind);
+        Assert.True(plain.Endpoints.PerStandardDeviation);
+        StudyDefinition full = StudyFolder.Read(CommentedKey().Replace(Published("sets.yaml"), "$1$2"));
+        Assert.True(full.Design.ReuseAllowed);
+        Assert.Equal([new MatchRule("age", 2), new MatchRule("sex", null)], full.Design.MatchOn);
+        Assert.Equal(["smoking", "bmi"], full.Design.Covariates);
+        Assert.Equal([IntervalKind.Profile], full.Analysis.Intervals);
+    }
+
+    [Fact]
     public void Every_study_file_on_the_page_is_read_and_every_design_is_among_them()
     {
         string[] files = [.. YamlBlock().Matches(StudyPage).Select(match => match.Groups[1].Value).Where(text => text.StartsWith("schema:", StringComparison.Ordinal))];

@@ -3,6 +3,7 @@ using MatchedSuite.Cli.Terminal;
 using MatchedSuite.Engine.Demonstration;
 using MatchedSuite.Engine.Running;
 using MatchedSuite.Storage;
+using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Cli.Commands;
 
@@ -17,25 +18,32 @@ internal static class DemoCommand
         {
             Description = "folder for the study and its results", HelpName = "DIR", DefaultValueFactory = _ => UsualFolder,
         };
-        var command = new Command("demo", "write the invented demo study into a folder and analyse it") { folder };
+        string[] designs = [.. DemoTable.All.Select(demo => WrittenName.Of(demo.Kind))];
+        var design = new Option<string>("--design")
+        {
+            Description = $"kind of the invented study: {string.Join(", ", designs)}", HelpName = "KIND", DefaultValueFactory = _ => designs[0],
+        };
+        design.AcceptOnlyFromAmong(designs);
+        var command = new Command("demo", "write an invented demo study into a folder and analyse it") { folder, design };
         command.SetAction((parsed, cancellation) => Task.FromResult(
-            common.Run(parsed, voice => Run(Path.GetFullPath(parsed.GetRequiredValue(folder)), voice, cancellation))));
+            common.Run(parsed, voice => Run(
+                Path.GetFullPath(parsed.GetRequiredValue(folder)), DemoTable.All[Array.IndexOf(designs, parsed.GetRequiredValue(design))].Write, voice, cancellation))));
         return command;
     }
 
-    private static int Run(string folder, Voice voice, CancellationToken cancellation)
+    private static int Run(string folder, Func<string, string> write, Voice voice, CancellationToken cancellation)
     {
-        string study = WriteStudy(folder);
+        string study = WriteStudy(folder, write);
         voice.Note($"wrote the invented study {study}; truth.csv beside it says which effects were planted");
         return AnalyzeCommand.Run(study, new RunOptions(), voice, cancellation);
     }
 
-    private static string WriteStudy(string folder)
+    private static string WriteStudy(string folder, Func<string, string> write)
     {
         try
         {
             Directory.CreateDirectory(folder);
-            return TwinDemo.Write(folder);
+            return write(folder);
         }
         catch (Exception error) when (error is IOException or UnauthorizedAccessException)
         {

@@ -1,5 +1,4 @@
 using System.Globalization;
-using MatchedSuite.Storage.Tables;
 using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Demonstration;
@@ -18,6 +17,7 @@ public static class TwinDemo
     private const double DetectionLimit = 9;
     private const long SheetStream = 1_000_000;
     private const long FactorStream = 2_000_000;
+    private const int MeasuredTwice = 20;
     private static readonly string[] SheetColumns =
         ["sample", "pair", "person", "glasshouse", "zygosity", "sex", "age", "bmi", "smoking", "months"];
 
@@ -27,32 +27,33 @@ public static class TwinDemo
     {
         var numbers = new InventedNumbers(seed);
         InventedMarker[] markers = Markers();
-        WriteSheet(Path.Combine(folder, "samples.csv"), numbers);
-        WritePanel(Path.Combine(folder, "panel.csv"), markers, numbers);
-        WriteDictionary(Path.Combine(folder, "markers.csv"), markers);
-        WriteTruth(Path.Combine(folder, "truth.csv"), markers);
+        string[] samples = [.. Enumerable.Range(0, Samples).Select(SampleName), SampleName(MeasuredTwice) + "-again"];
+        DemoTables.Write(Path.Combine(folder, "samples.csv"), SheetColumns, [.. samples.Select((name, sample) => SheetRow(PersonOf(sample), name, numbers))]);
+        DemoTables.WritePanel(Path.Combine(folder, "panel.csv"), markers, samples, (marker, sample) => Cell(markers[marker], marker, PersonOf(sample), numbers));
+        DemoTables.WriteDictionary(Path.Combine(folder, "markers.csv"), markers, LimitOf);
+        DemoTables.WriteTruth(Path.Combine(folder, "truth.csv"), markers);
         return DemoStudyFile.Write("twins", folder);
     }
 
     private static InventedMarker[] Markers() =>
     [
-        .. Range(140, i => new InventedMarker(
+        .. DemoTables.Range(140, i => new InventedMarker(
             $"prot-{i:000}", $"protein {i:000}", EndpointKind.Continuous, "µg/L", Transform.Log2, "proteins", ProteinEffect(i))),
-        .. Range(30, i => new InventedMarker(
+        .. DemoTables.Range(30, i => new InventedMarker(
             $"met-{i:00}", $"metabolite {i:00}", EndpointKind.Continuous, "mmol/L", Transform.None, "metabolites", i is 4 or 17 ? 0.55 : i is 22 ? -0.5 : 0)),
-        .. Range(18, i => new InventedMarker(
+        .. DemoTables.Range(18, i => new InventedMarker(
             $"sign-{i:00}", $"antibody {i:00} present", EndpointKind.Binary, "", Transform.None, "signs", i is 3 or 11 ? 1.1 : 0)),
-        .. Range(12, i => new InventedMarker(
+        .. DemoTables.Range(12, i => new InventedMarker(
             $"score-{i:00}", $"symptom score {i:00}", EndpointKind.Ordinal, "", Transform.None, "symptoms", i is 6 ? 0.7 : 0)),
-        .. Range(10, i => new InventedMarker(
+        .. DemoTables.Range(10, i => new InventedMarker(
             $"spells-{i:00}", $"spells of complaint {i:00}", EndpointKind.Count, "", Transform.None, "spells", i is 2 ? 0.9 : 0)),
     ];
 
     // Twelve proteins differ, some up and some down, from hardly to plainly visible.
     private static double ProteinEffect(int protein) => protein % 12 == 5 ? (protein % 24 == 5 ? 1 : -1) * (0.3 + 0.05 * (protein / 12)) : 0;
 
-    private static IEnumerable<InventedMarker> Range(int count, Func<int, InventedMarker> marker) =>
-        Enumerable.Range(1, count).Select(marker);
+    // The last sample is the second one of a person.
+    private static int PersonOf(int sample) => sample < Samples ? sample : MeasuredTwice;
 
     private static string SampleName(int sample) => string.Create(CultureInfo.InvariantCulture, $"GT{sample / 2 + 1:000}{(sample % 2 == 0 ? 'a' : 'b')}");
 
@@ -60,25 +61,14 @@ public static class TwinDemo
     private static bool IsIndex(int sample, InventedNumbers numbers) =>
         (sample % 2 == 0) == (numbers.Uniform(SheetStream, sample / 2) < 0.5);
 
-    private static void WriteSheet(string path, InventedNumbers numbers)
-    {
-        using var sink = new CsvTableSink(path, Texts(SheetColumns));
-        var batch = new TableBatch(Texts(SheetColumns), Samples + 1);
-        for (int sample = 0; sample < Samples; sample++)
-            AddSheetRow(batch, sample, SampleName(sample), numbers);
-        AddSheetRow(batch, 20, SampleName(20) + "-again", numbers);
-        sink.Write(batch);
-        sink.Complete();
-    }
-
-    private static void AddSheetRow(TableBatch batch, int sample, string name, InventedNumbers numbers)
+    private static string?[] SheetRow(int sample, string name, InventedNumbers numbers)
     {
         int pair = sample / 2;
         bool orphan = sample == 61;
         bool roleLost = sample == 98;
         int age = 24 + (int)(44 * numbers.Uniform(SheetStream + 1, pair)) + (sample == 133 ? 11 : 0);
         bool female = numbers.Uniform(SheetStream + 2, pair) < 0.55;
-        string?[] cells =
+        return
         [
             name,
             orphan ? null : string.Create(CultureInfo.InvariantCulture, $"P{pair + 1:000}"),
@@ -91,33 +81,11 @@ public static class TwinDemo
             numbers.Uniform(SheetStream + 3, sample) < 0.25 ? "yes" : "no",
             (12 + (int)(24 * numbers.Uniform(SheetStream + 4, sample))).ToString(CultureInfo.InvariantCulture),
         ];
-        for (int column = 0; column < cells.Length; column++)
-            batch.Text(column)[batch.Rows] = cells[column];
-        batch.Rows++;
     }
 
     private static string? BodyMassIndex(int sample, InventedNumbers numbers) => sample == 150
         ? null
-        : Rounded(25 + 3 * numbers.Normal(SheetStream + 5, sample / 2) + 1.5 * numbers.Normal(SheetStream + 6, sample));
-
-    private static void WritePanel(string path, InventedMarker[] markers, InventedNumbers numbers)
-    {
-        TableColumn[] schema =
-            [new("marker", ColumnType.Text), .. Texts([.. Enumerable.Range(0, Samples).Select(SampleName), SampleName(20) + "-again"])];
-        using var sink = new CsvTableSink(path, schema);
-        var batch = new TableBatch(schema, markers.Length);
-        for (int marker = 0; marker < markers.Length; marker++)
-        {
-            batch.Text(0)[marker] = markers[marker].Name;
-            for (int sample = 0; sample < Samples; sample++)
-                batch.Text(sample + 1)[marker] = Cell(markers[marker], marker, sample, numbers);
-            batch.Text(Samples + 1)[marker] = Cell(markers[marker], marker, 20, numbers);
-            batch.Rows++;
-        }
-
-        sink.Write(batch);
-        sink.Complete();
-    }
+        : DemoTables.Rounded(25 + 3 * numbers.Normal(SheetStream + 5, sample / 2) + 1.5 * numbers.Normal(SheetStream + 6, sample));
 
     private static string? Cell(InventedMarker marker, int stream, int sample, InventedNumbers numbers)
     {
@@ -131,7 +99,7 @@ public static class TwinDemo
             EndpointKind.Count => Math.Max(0, (int)Math.Floor(Math.Exp(0.7 + 0.6 * latent))).ToString(CultureInfo.InvariantCulture),
             EndpointKind.Ordinal => Math.Clamp((int)Math.Floor(latent + 1.5), 0, 4).ToString(CultureInfo.InvariantCulture),
             _ when marker.Name == "prot-120" && sample is 14 or 87 => "0",
-            _ => Rounded(marker.Transform == Transform.Log2 ? 12 * Math.Pow(2, 0.6 * latent) : 4 + 0.35 * latent),
+            _ => DemoTables.Rounded(marker.Transform == Transform.Log2 ? 12 * Math.Pow(2, 0.6 * latent) : 4 + 0.35 * latent),
         };
     }
 
@@ -145,16 +113,6 @@ public static class TwinDemo
         return shared + factor + own + effect;
     }
 
-    private static string Rounded(double value) => double.Parse(
-        value.ToString("G4", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture).ToString(CultureInfo.InvariantCulture);
-
-    private static void WriteDictionary(string path, InventedMarker[] markers) => WriteMarkers(
-        path, ["endpoint", "label", "kind", "unit", "transform", "detection_limit", "family"], markers,
-        marker =>
-        [
-            marker.Name, marker.Label, WrittenName.Of(marker.Kind), marker.Unit, WrittenName.Of(marker.Transform), LimitOf(marker), marker.Family,
-        ]);
-
     // A few proteins have a limit in the middle of their values, one a limit above most of them.
     private static string LimitOf(InventedMarker marker) => marker.Name switch
     {
@@ -162,26 +120,4 @@ public static class TwinDemo
         "prot-100" => (2 * DetectionLimit).ToString(CultureInfo.InvariantCulture),
         _ => "",
     };
-
-    private static void WriteTruth(string path, InventedMarker[] markers) => WriteMarkers(
-        path, ["endpoint", "planted_effect"], markers,
-        marker => [marker.Name, marker.Effect.ToString("0.##", CultureInfo.InvariantCulture)]);
-
-    private static void WriteMarkers(string path, string[] columns, InventedMarker[] markers, Func<InventedMarker, string[]> cells)
-    {
-        using var sink = new CsvTableSink(path, Texts(columns));
-        var batch = new TableBatch(Texts(columns), markers.Length);
-        foreach (InventedMarker marker in markers)
-        {
-            string[] row = cells(marker);
-            for (int column = 0; column < row.Length; column++)
-                batch.Text(column)[batch.Rows] = row[column];
-            batch.Rows++;
-        }
-
-        sink.Write(batch);
-        sink.Complete();
-    }
-
-    private static TableColumn[] Texts(params string[] names) => [.. names.Select(name => new TableColumn(name, ColumnType.Text))];
 }
