@@ -46,6 +46,25 @@ public class BadInputTests
         ["parquet cut short"] = (f => { f.Change("study.yaml", "panel.csv", "panel.parquet"); File.WriteAllText(f.At("panel.parquet"), "PAR1 and then nothing"); }, ["panel.parquet", "Parquet"]),
     };
 
+    // What is done to the small study of matched sets.
+    private static readonly Dictionary<string, (Action<StudyFolder> Break, string[] Named)> CasesOfSets = new()
+    {
+        ["no set with both roles"] = (f => f.Write("samples.csv", f.Read("samples.csv").Replace(",control,", ",other,", StringComparison.Ordinal) + "x,r99,px,control,east,40,no\n"), ["samples.csv", "no set has a sample in both roles"]),
+        ["case value that never occurs"] = (f => f.Change("study.yaml", "index: case", "index: patient"), ["'patient'", "'case', 'control'"]),
+        ["a person with both roles"] = (f => f.Change("samples.csv", "s1b,r1,ps1b", "s1b,r1,ps1a"), ["line 2", "line 3", "'ps1a' has both roles of the set 'r1'"]),
+        ["a person twice in a set"] = (f => f.Change("samples.csv", "s2c,r2,ps2c", "s2c,r2,ps2b"), ["the set 'r2' has 2 samples of 'ps2b'", "design.replicates"]),
+        ["one sample in two sets"] = (f => f.Write("samples.csv", f.Read("samples.csv") + "s1b,r2,ps1b,control,east,41,no\n"), ["s1b", "every sample once"]),
+        ["one sample twice in a set"] = (f => { f.Change("study.yaml", "  subject: person", "  subject: person\n  reuse: allowed"); f.Write("samples.csv", f.Read("samples.csv") + "s1b,r1,ps1b,control,east,41,no\n"); }, ["s1b", "every sample once in a set"]),
+        ["a method for pairs"] = (f => f.Change("study.yaml", "aligned-rank", "signed-rank"), ["'signed-rank' is not for a design of kind 'sets'"]),
+        ["a key of pairs"] = (f => f.Change("study.yaml", "  subject: person", "  subject: person\n  person-time: age"), ["'design.person-time' is not available in this version for this kind of design, only for 'pairs'"]),
+        ["a rule for zeros"] = (f => f.Change("study.yaml", "adjust: [", "zeros: pratt, adjust: ["), ["'analysis.zeros'", "only for 'pairs'"]),
+        ["a sign that is none"] = (f => { f.Change("study.yaml", "analysis: {continuous: [conditional-logistic, within-set-linear, aligned-rank, set-relabel]", "endpoints: {kind: binary}\nanalysis: {binary: [mantel-haenszel]"); }, ["panel.csv", "'crp'", "binary"]),
+        ["a covariate that is not there"] = (f => f.Change("study.yaml", "  subject: person", "  subject: person\n  covariates: [weight]"), ["samples.csv", "'weight'"]),
+        ["text in a column matched within"] = (f => { f.Change("study.yaml", "  subject: person", "  subject: person\n  match-on: [{column: age, within: 2}]"); f.Change("samples.csv", "east,42,", "east,old,"); }, ["samples.csv", "'old' is not a number"]),
+    };
+
+    public static TheoryData<string> NamesOfSets => [.. CasesOfSets.Keys];
+
     public static TheoryData<string> Names => [.. Cases.Keys];
 
     [Theory]
@@ -53,7 +72,20 @@ public class BadInputTests
     public void One_message_exit_code_2_and_nothing_written(string name)
     {
         using StudyFolder folder = StudyFolder.Small();
-        Cases[name].Break(folder);
+        RequireOneMessage(folder, Cases[name]);
+    }
+
+    [Theory]
+    [MemberData(nameof(NamesOfSets))]
+    public void Matched_sets_one_message_exit_code_2_and_nothing_written(string name)
+    {
+        using StudyFolder folder = SmallSets.Folder();
+        RequireOneMessage(folder, CasesOfSets[name]);
+    }
+
+    private static void RequireOneMessage(StudyFolder folder, (Action<StudyFolder> Break, string[] Named) @case)
+    {
+        @case.Break(folder);
 
         Finished run = folder.Run("analyze", "study.yaml");
 
@@ -61,7 +93,7 @@ public class BadInputTests
         string message = Assert.Single(run.Error.Split('\n', StringSplitOptions.RemoveEmptyEntries));
         Assert.StartsWith("matched: error: ", message, StringComparison.Ordinal);
         Assert.Contains("xpected ", message, StringComparison.Ordinal);
-        Assert.All(Cases[name].Named, named => Assert.Contains(named, message, StringComparison.Ordinal));
+        Assert.All(@case.Named, named => Assert.Contains(named, message, StringComparison.Ordinal));
         Assert.Empty(run.Output);
         Assert.DoesNotContain(Directory.EnumerateFileSystemEntries(folder.Path).Select(Path.GetFileName), IsOurs);
     }

@@ -7,13 +7,15 @@ namespace MatchedSuite.EndToEnd.Tests;
 /// <summary>The same inputs, study file, seed and version give the same bytes, however the work is divided.</summary>
 public class SameBytesTests
 {
-    private static readonly string[] Written = ["results.parquet", "results.csv", "summary.csv", "summary.md", "discoveries.csv", "families.csv", "audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv"];
+    private static readonly string[] Written = ["results.parquet", "results.csv", "details.parquet", "summary.csv", "summary.md", "discoveries.csv", "families.csv", "audit/dispositions.parquet", "audit/matching.md", "audit/untested.csv"];
 
-    [Fact]
-    public void Threads_and_block_sizes_change_no_byte()
+    [Theory]
+    [InlineData("pairs")]
+    [InlineData("sets")]
+    public void Threads_and_block_sizes_change_no_byte(string design)
     {
         using var folder = new StudyFolder();
-        Assert.Equal(0, folder.Run("demo", "--out", "demo", "--quiet").ExitCode);
+        Assert.Equal(0, folder.Run("demo", "--design", design, "--out", "demo", "--quiet").ExitCode);
         string[][] ways = [["--threads", "1"], ["--threads", "2"], ["--threads", "7"], ["--threads", "2", "--memory", "64MiB"]];
         foreach (string[] way in ways)
         {
