@@ -76,6 +76,23 @@ public sealed class SetStudyTests : IDisposable
         Assert.Contains("A member without the value leaves its set", _folder.Read("results/summary.md"), StringComparison.Ordinal);
     }
 
+    [Theory]
+    [InlineData("pairs", "mcnemar-exact")]
+    [InlineData("sets", "mantel-haenszel")]
+    public void Replicates_that_disagree_on_a_sign_count_as_yes(string kind, string method)
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        folder.Change("study.yaml", "kind: pairs\n  set: pair", $"kind: {kind}\n  set: pair\n  subject: person\n  replicates: mean");
+        folder.Change("study.yaml", "analysis: {continuous: [paired-t, signed-rank]", $"endpoints: {{kind: binary}}\nanalysis: {{binary: [{method}]");
+        folder.Write("samples.csv", "person," + SmallStudy.Samples.Replace("\ns", "\np", StringComparison.Ordinal).Split('\n')[0] + "\n"
+            + string.Concat(SmallStudy.Samples.Split('\n').Skip(1).Where(line => line.Length > 0).Select(line => $"{line.Split(',')[0]},{line}\n")) + "s1a,s1c,p1,yes\n");
+        string header = SmallStudy.Panel.Split('\n')[0] + ",s1c\n";
+        folder.Write("panel.csv", header + "sign,1,0,1,0,1,0,1,0,1,0,1,0,0,1,0,0,0\nsure,1,0,1,0,1,0,1,0,1,0,1,0,0,1,0,0,1\n");
+        Finished run = folder.Run("analyze", "study.yaml");
+        Assert.True(run.ExitCode == 0, run.Error);
+        Assert.Equal(folder.Results().Text("sure", method, "p_value"), folder.Results().Text("sign", method, "p_value"));
+    }
+
     [Fact]
     public void Controls_that_serve_several_cases_are_flagged_and_told_of()
     {

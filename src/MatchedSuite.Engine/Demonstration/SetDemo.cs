@@ -20,6 +20,7 @@ public static class SetDemo
     private const int WithoutCase = 30;
     private const int WithoutControl = 45;
     private const int WithWrongAge = 61;
+    private const int WithUnknownSmoker = 52;
     private const int WithUnmeasured = 92;
     private const int Lending = 76;
     private const int Borrowing = 77;
@@ -84,7 +85,7 @@ public static class SetDemo
             matched % 4 == 1 ? "village" : "factory",
             numbers.Uniform(SheetStream + 2, matched) < 0.4 ? "f" : "m",
             age.ToString(CultureInfo.InvariantCulture),
-            member.Key == 210 ? null : numbers.Uniform(SheetStream + 3, member.Key) < 0.3 ? "yes" : "no",
+            member is { Set: WithUnknownSmoker, Place: 2 } ? null : numbers.Uniform(SheetStream + 3, member.Key) < 0.3 ? "yes" : "no",
             DemoTables.Rounded(26 + 3.5 * numbers.Normal(SheetStream + 4, member.Key)),
         ];
     }

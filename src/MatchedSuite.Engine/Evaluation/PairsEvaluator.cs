@@ -56,6 +56,8 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         Span<double> reference = both[places.Index.Sets..];
         places.Index.Gather(values, index);
         places.Reference.Gather(values, reference);
+        if (endpoint.Kind == EndpointKind.Binary)
+            MeanSigns.Round(both);
         int undefined = Transformed(endpoint.Transform, both);
         int before = output.Rows.Count;
         foreach (PlannedMethod planned in _design.MethodsFor(endpoint.Kind))
@@ -131,6 +133,8 @@ internal sealed class PairsEvaluator : EndpointEvaluator
         Span<double> reference = frame.Doubles(places.Index.Sets);
         places.Index.Gather(above, index);
         places.Reference.Gather(above, reference);
+        MeanSigns.Round(index);
+        MeanSigns.Round(reference);
         var (belowIndex, knownIndex) = BelowCount.Of(index);
         var (belowReference, knownReference) = BelowCount.Of(reference);
         PairDetails.AddNumber(output.Details, ResultRow.AllStrata, Quantity.IndexBelowLimit, belowIndex);

@@ -33,6 +33,8 @@ internal sealed class SetsEvaluator : EndpointEvaluator
         if (!above.IsEmpty)
             TakeLimit(endpoint.DetectionLimit!.Value, values, above);
         _design.Layout.Values.Gather(values, members);
+        if (endpoint.Kind == EndpointKind.Binary)
+            MeanSigns.Round(members);
         undefined = Transformed(endpoint.Transform, members);
         Transform scale = endpoint.Transform;
         Outcome outcome = Outcome.Tested;
@@ -139,6 +141,7 @@ internal sealed class SetsEvaluator : EndpointEvaluator
     private void AddAboveBelow(Span<double> above, int rowsBefore, BlockOutput output)
     {
         using Scratch.Frame frame = Scratch.Open();
+        MeanSigns.Round(above);
         var (below, known) = BelowCount.Of(above);
         int belowIndex = BelowCount.Of(TakeRole(true, above, frame.Doubles(above.Length))).Below;
         var details = new DetailSink(output, 0, ResultRow.AllStrata, DetailRow.NoMethod);

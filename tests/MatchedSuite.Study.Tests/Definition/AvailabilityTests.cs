@@ -80,6 +80,20 @@ public class AvailabilityTests
     }
 
     [Fact]
+    public void A_key_may_be_available_in_one_kind_of_design_alone()
+    {
+        Capabilities some = Capabilities.Everything with
+        {
+            Keys = new HashSet<string>(),
+            KeysOfDesign = new Dictionary<DesignKind, IReadOnlyList<string>> { [DesignKind.Sets] = ["endpoints.scale"] },
+        };
+        string scaled = Plain.With("scale: none", "scale: sd");
+        string message = StudyFolder.Refusal(scaled, some).Message;
+        Assert.Contains("'endpoints.scale' is not available in this version for this kind of design, only for 'sets'", message, StringComparison.Ordinal);
+        Assert.True(StudyFolder.Read(scaled.With("kind: pairs", "kind: sets"), some).Endpoints.PerStandardDeviation);
+    }
+
+    [Fact]
     public void A_name_that_is_not_known_at_all_is_not_called_unavailable()
     {
         string message = StudyFolder.Refusal(Plain.With("zeros: drop", "continuous: [sing]"), PairsOnly).Message;
