@@ -12,6 +12,9 @@ internal sealed class ExecutionRecord(int threads, long memory)
     private readonly List<(string Step, long Milliseconds)> _steps = [];
     private long _last = Environment.TickCount64;
 
+    /// <summary>Time that the threads together spent on testing endpoints, reading not counted.</summary>
+    public TimeSpan Evaluation { get; set; }
+
     /// <summary>A step is over; its time counts from the end of the one before.</summary>
     public void StepDone(string step)
     {
@@ -31,6 +34,7 @@ internal sealed class ExecutionRecord(int threads, long memory)
         json.WriteNumber("memory_bytes", memory);
         json.WriteString("started", _started.ToString("O", CultureInfo.InvariantCulture));
         json.WriteNumber("milliseconds", Environment.TickCount64 - _start);
+        json.WriteNumber("evaluation_thread_milliseconds", (long)Evaluation.TotalMilliseconds);
         json.WriteStartObject("steps_milliseconds");
         foreach (var (step, milliseconds) in _steps)
             json.WriteNumber(step, milliseconds);

@@ -93,6 +93,7 @@ public sealed class AnalysisRun
         var traits = new EndpointTraits(stream.Names.Count, describe);
         ModeratedFinish.Run(store.Rows, plan, traits.Family);
         _execution.StepDone("tests");
+        _execution.Evaluation = stream.Evaluation;
 
         HypothesisTable table = HypothesisTable.Of(store.Rows, plan, traits);
         AdjustedColumns adjusted = Adjust(inputs.Source, store, plan, stream.Names, table, traits, cancellation);

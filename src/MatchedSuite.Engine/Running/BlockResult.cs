@@ -23,6 +23,9 @@ internal sealed class BlockResult
     /// <summary>Endpoints with such values.</summary>
     public int EndpointsWithUndefinedValues { get; set; }
 
+    /// <summary>How long the evaluation of its endpoints took, reading not counted.</summary>
+    public TimeSpan Evaluation { get; set; }
+
     /// <summary>Empties it for the next block.</summary>
     public void Clear()
     {

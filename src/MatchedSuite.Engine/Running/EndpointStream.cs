@@ -30,6 +30,9 @@ internal sealed class EndpointStream
     /// <summary>Endpoints with such values.</summary>
     public int EndpointsWithUndefinedValues { get; private set; }
 
+    /// <summary>Time that the threads together spent on evaluation, reading not counted.</summary>
+    public TimeSpan Evaluation { get; private set; }
+
     /// <summary>Runs the stream to its end.</summary>
     public static EndpointStream Run(
         AnalysisPlan plan, EndpointSource source, ResultStore store, RunOptions options, IRunObserver observer, CancellationToken cancellation)
@@ -73,6 +76,7 @@ internal sealed class EndpointStream
         _store.Rows.Append(block.Output.Rows.Records);
         _store.Details.Append(block.Output.Details.Records);
         _store.Differences?.Append(block.Output.Differences.Values);
+        Evaluation += block.Evaluation;
         UndefinedValues += block.UndefinedValues;
         EndpointsWithUndefinedValues += block.EndpointsWithUndefinedValues;
         _observer.Progress(block.Reached, Names.Count);

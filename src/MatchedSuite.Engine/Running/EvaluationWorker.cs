@@ -1,3 +1,4 @@
+using System.Diagnostics;
 using MatchedSuite.Engine.Evaluation;
 using MatchedSuite.Engine.Planning;
 using MatchedSuite.Storage.Values;
@@ -12,6 +13,7 @@ internal sealed class EvaluationWorker(AnalysisPlan plan) : IBlockWorker
     /// <inheritdoc/>
     public void Work(EndpointBlock block, BlockResult result)
     {
+        long start = Stopwatch.GetTimestamp();
         long undefinedBefore = _evaluator.UndefinedValues;
         int endpointsBefore = _evaluator.EndpointsWithUndefinedValues;
         for (int endpoint = 0; endpoint < block.Count; endpoint++)
@@ -20,6 +22,7 @@ internal sealed class EvaluationWorker(AnalysisPlan plan) : IBlockWorker
             _evaluator.Evaluate(block.Values(endpoint), plan.Catalogue.Describe(block.Names[endpoint]), endpoint, result.Output);
         }
 
+        result.Evaluation = Stopwatch.GetElapsedTime(start);
         result.UndefinedValues = _evaluator.UndefinedValues - undefinedBefore;
         result.EndpointsWithUndefinedValues = _evaluator.EndpointsWithUndefinedValues - endpointsBefore;
     }

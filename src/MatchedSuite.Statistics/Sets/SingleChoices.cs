@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
@@ -57,6 +58,8 @@ internal readonly ref struct SingleChoices
         return logLikelihood;
     }
 
+    // Code compiled ahead holds no 256-bit vectors, and the first compilation at run time leaves them slow: these are compiled once, well.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static double AddOneColumn(
         ReadOnlySpan<Vector256<double>> tiles, int others, double beta, Span<double> gradient, Span<double> information)
     {
@@ -150,6 +153,7 @@ internal readonly ref struct SingleChoices
     }
 
     // Leaves exp(β·D − shift) in weights; shift is the largest β·D, at least 0, so that nothing overflows.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static Vector256<double> Weigh(
         ReadOnlySpan<Vector256<double>> tile, ReadOnlySpan<double> beta, Span<Vector256<double>> weights)
     {
@@ -169,6 +173,7 @@ internal readonly ref struct SingleChoices
         return shift;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void AddMoments(
         ReadOnlySpan<Vector256<double>> tile,
         ReadOnlySpan<Vector256<double>> weights,
