@@ -113,10 +113,7 @@ internal sealed class SetsEvaluator : EndpointEvaluator
         ReadOnlySpan<double> members, SetPart part, ReadOnlySpan<PlannedSetMethod> methods, Outcome outcome, BlockOutput output, int firstRow)
     {
         using Scratch.Frame frame = Scratch.Open();
-        Span<double> values = frame.Doubles(part.Members.Length);
-        for (int i = 0; i < values.Length; i++)
-            values[i] = members[part.Members[i]];
-        SetSample sets = SetSample.Of(values, part.Starts, part.IsIndex, part.Covariates, frame);
+        SetSample sets = Take(members, part, frame);
         TestResult? untested = outcome != Outcome.Tested
             ? TestResult.Untested(outcome, sets.Sets, sets.Members)
             : UntestedBefore(part.Sets, sets.Sets, sets.Members);
@@ -135,6 +132,22 @@ internal sealed class SetsEvaluator : EndpointEvaluator
             foreach (SetExtra extra in methods[method].Extras.Span)
                 extra(sets, Plan.Options, Scratch, details);
         }
+    }
+
+    // An endpoint that everybody has is taken as it lies; else members and sets that lack something leave.
+    private static SetSample Take(ReadOnlySpan<double> members, SetPart part, in Scratch.Frame frame)
+    {
+        Span<double> values = frame.Doubles(part.Members.Length);
+        bool complete = part.CovariatesKnown;
+        for (int i = 0; i < values.Length; i++)
+        {
+            values[i] = members[part.Members[i]];
+            complete &= !double.IsNaN(values[i]);
+        }
+
+        return complete
+            ? SetSample.OfComplete(values, part.Starts, part.IndexCounts, part.Covariates)
+            : SetSample.Of(values, part.Starts, part.IsIndex, part.Covariates, frame);
     }
 
     // Counts per role; where most values lie below the limit, the rows say so and above against below is tested beside them.

@@ -63,6 +63,27 @@ public readonly ref struct SetSample
         scoped ReadOnlySpan<double> values, scoped ReadOnlySpan<int> starts, scoped ReadOnlySpan<bool> isIndex, in Scratch.Frame frame) =>
         Of(values, starts, isIndex, [], frame);
 
+    /// <summary>Takes one endpoint that every member has, without copying: the members already lie as <see cref="SetSample"/> says.</summary>
+    /// <param name="values">One finite value a member, set after set, index role first within a set.</param>
+    /// <param name="starts">Where each set starts among the members, then the number of members.</param>
+    /// <param name="indexCounts">How many members of each set have the index role: at least one, and not all.</param>
+    /// <param name="covariates">Columns one after another, each with one finite value a member.</param>
+    /// <exception cref="ArgumentException">The lengths do not fit together, or a set lacks a role.</exception>
+    public static SetSample OfComplete(
+        ReadOnlySpan<double> values, ReadOnlySpan<int> starts, ReadOnlySpan<int> indexCounts, ReadOnlySpan<double> covariates)
+    {
+        Require.OneStartASet(starts, values.Length);
+        Require.OneEntryAMember(indexCounts.Length, starts.Length - 1);
+        Require.WholeColumns(covariates, values.Length);
+        for (int s = 0; s < indexCounts.Length; s++)
+        {
+            if (indexCounts[s] < 1 || indexCounts[s] >= starts[s + 1] - starts[s])
+                throw new ArgumentException($"Set {s + 1} has {indexCounts[s]} of {starts[s + 1] - starts[s]} members in the index role; it needs both roles.");
+        }
+
+        return new SetSample(values, starts, indexCounts, covariates, default);
+    }
+
     /// <summary>
     /// Takes the usable members into the memory of <paramref name="frame"/>: members with a missing value or covariate leave
     /// their set, then sets without both roles leave, and both are counted.

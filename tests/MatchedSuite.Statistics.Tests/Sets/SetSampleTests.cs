@@ -31,6 +31,22 @@ public class SetSampleTests
     }
 
     [Fact]
+    public void Complete_members_that_lie_in_order_are_taken_as_they_are()
+    {
+        using Scratch.Frame frame = new Scratch().Open();
+        double[] values = [2, 1, 3, 4, 6, 5, 8, 7], covariate = [1, 2, 3, 4, 5, 6, 7, 8];
+        SetSample copied = SetSample.Of(values, Starts, [true, false, false, true, true, false, true, false], covariate, frame);
+        SetSample taken = SetSample.OfComplete(values, Starts, [1, 2, 1], covariate);
+        Assert.Equal(copied.Values.ToArray(), taken.Values.ToArray());
+        Assert.Equal(copied.IndexCounts.ToArray(), taken.IndexCounts.ToArray());
+        Assert.Equal(copied.Covariate(0).ToArray(), taken.Covariate(0).ToArray());
+        Assert.Equal(copied.Lost, taken.Lost);
+        Assert.Throws<ArgumentException>(() => SetSample.OfComplete(values, Starts, [1, 3, 1], covariate).Sets);
+        Assert.Throws<ArgumentException>(() => SetSample.OfComplete(values, Starts, [0, 2, 1], covariate).Sets);
+        Assert.Throws<ArgumentException>(() => SetSample.OfComplete(values, Starts, [1, 2], covariate).Sets);
+    }
+
+    [Fact]
     public void Lengths_that_do_not_fit_are_refused()
     {
         Assert.Throws<ArgumentException>(() => Take([0, 2], [true, false], []));
