@@ -1,4 +1,3 @@
-using System.Globalization;
 using MatchedSuite.EndToEnd.Tests.Program;
 
 namespace MatchedSuite.EndToEnd.Tests;
@@ -108,7 +107,7 @@ public sealed class PublishedSetsTests : IDisposable
 
     private ResultsTable Analyse(string dataset, string design, string endpoints, string analysis)
     {
-        File.Copy(Path.Combine(AppContext.BaseDirectory, "Reference", dataset + ".csv"), _folder.At(dataset + ".csv"));
+        File.Copy(ReferenceValues.File(dataset + ".csv"), _folder.At(dataset + ".csv"));
         _folder.Write(
             "study.yaml",
             $$"""
@@ -131,9 +130,7 @@ public sealed class PublishedSetsTests : IDisposable
 
     private static void Close(string dataset, string @case, string quantity, double found)
     {
-        string path = Path.Combine(AppContext.BaseDirectory, "Reference", "expected.csv");
-        string[] row = File.ReadLines(path).Select(line => line.Split(',')).Single(cells => cells[0] == dataset && cells[1] == @case && cells[2] == quantity);
-        double expected = double.Parse(row[3], CultureInfo.InvariantCulture);
-        Assert.True(Math.Abs(found - expected) <= Tolerance * Math.Abs(expected), $"{@case} {quantity}: expected {row[3]}, found {found:R}");
+        double expected = ReferenceValues.Of(dataset, @case, quantity);
+        Assert.True(Math.Abs(found - expected) <= Tolerance * Math.Abs(expected), $"{@case} {quantity}: expected {expected:R}, found {found:R}");
     }
 }

@@ -154,6 +154,22 @@ public sealed class SetStudyTests : IDisposable
     }
 
     [Fact]
+    public void Adjustments_and_their_intervals_apply_to_sets_as_to_pairs()
+    {
+        Change("adjust: [bonferroni, holm, bh]}", "adjust: [bonferroni, sidak, hommel, bh, two-stage-bh], intervals: [simultaneous, profile]}");
+        ResultsTable results = Analyse();
+        DetailsTable details = DetailsTable.Read(_folder.At("results/details.parquet"));
+        Assert.Equal(3 * results.Number("crp", "conditional-logistic", "p_value"), results.Number("crp", "conditional-logistic", "p_bonferroni"), 1e-15);
+
+        // Of three endpoints at 95 %: the normal quantile of 0.05/6, base R 4.2.2.
+        double error = results.Number("crp", "conditional-logistic", "standard_error");
+        double estimate = results.Number("crp", "conditional-logistic", "estimate");
+        Assert.Equal(estimate + (2.3939797998185104 * error), results.Number("crp", "conditional-logistic", "ci_sim_high"), 1e-8);
+        Assert.InRange(details["crp", "conditional-logistic", "profile-high"], estimate, double.MaxValue);
+        Assert.Equal("", results.Text("crp", "aligned-rank", "ci_sim_high"));
+    }
+
+    [Fact]
     public void Cautions_are_those_of_a_case_control_study()
     {
         Analyse();

@@ -28,7 +28,7 @@ internal static class Cautions
         "A sample taken after the diagnosis may show the disease or its treatment, not what came before it.";
 
     private const string ReusedControls =
-        "Some people serve in several sets: the sets are not independent, so standard errors and p-values are somewhat too small.";
+        "Some people serve in several sets: the sets are not independent, so standard errors and p-values can be too small.";
 
     private const string MembersMissing =
         "A member without the value leaves its set, and a set left without one of the roles leaves with it; this is fair only where values are missing for reasons unrelated to them.";

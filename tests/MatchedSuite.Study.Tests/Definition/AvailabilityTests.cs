@@ -94,6 +94,19 @@ public class AvailabilityTests
     }
 
     [Fact]
+    public void An_interval_may_be_available_in_one_kind_of_design_alone()
+    {
+        Capabilities some = Capabilities.Everything with
+        {
+            Intervals = new HashSet<IntervalKind> { IntervalKind.Fcr },
+            IntervalsOfDesign = new Dictionary<DesignKind, IReadOnlyList<IntervalKind>> { [DesignKind.Sets] = [IntervalKind.Profile] },
+        };
+        string profile = Plain.With("zeros: drop", "intervals: [fcr, profile]");
+        Assert.Contains("'profile' is not available in this version", StudyFolder.Refusal(profile, some).Message, StringComparison.Ordinal);
+        Assert.Equal([IntervalKind.Fcr], StudyFolder.Read(profile.With("kind: pairs", "kind: sets"), some).Analysis.IntervalsOverEndpoints);
+    }
+
+    [Fact]
     public void A_name_that_is_not_known_at_all_is_not_called_unavailable()
     {
         string message = StudyFolder.Refusal(Plain.With("zeros: drop", "continuous: [sing]"), PairsOnly).Message;
