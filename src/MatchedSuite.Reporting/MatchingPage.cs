@@ -16,7 +16,10 @@ public static class MatchingPage
         page.Append(Invariant($"Sample sheet `{Path.GetFileName(study.Data.Samples)}`, design `{WrittenName.Of(study.Design.Kind)}`. "));
         page.Append("This page contains identifiers; docs/matching.md explains every term.\n");
         Add(page, "From rows read to rows used", Flow(audit));
-        Add(page, "Sets by shape", Shapes(audit));
+        if (audit.Patterns is null)
+            Add(page, "Sets by shape", Shapes(audit));
+        foreach (var (heading, body) in PlaceSections.Of(audit))
+            Add(page, heading, body);
         if (audit.Arrangement.Strata.Length > 0)
             Add(page, "Used sets by stratum", Strata(audit.Arrangement));
         if (audit.Balance.Length > 0)

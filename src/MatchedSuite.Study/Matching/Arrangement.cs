@@ -9,7 +9,7 @@ public sealed record Arrangement
     /// <summary>Names of the sets (pairs, subjects), in order of first appearance in the sample sheet.</summary>
     public required string[] Sets { get; init; }
 
-    /// <summary>Pairs: index, then reference. Visits: the visits in order. Matched sets have none.</summary>
+    /// <summary>Pairs: index, then reference. Visits, periods: in order of time, with subjects who lack some. Matched sets have none.</summary>
     public required Place[] Places { get; init; }
 
     /// <summary>Matched sets: who stands in which set and role; null for other designs.</summary>
@@ -20,6 +20,9 @@ public sealed record Arrangement
 
     /// <summary>The strata, sorted ordinally; empty when the study has none.</summary>
     public string[] Strata { get; init; } = [];
+
+    /// <summary>Change by arm: 0 for subjects of the index arm, 1 of the reference arm; crossover: 0 for those with the index treatment first, 1 for the others; else empty.</summary>
+    public int[] GroupOfSet { get; init; } = [];
 
     /// <summary>For each set the position of its stratum in <see cref="Strata"/>; empty when the study has none.</summary>
     public int[] StratumOfSet { get; init; } = [];

@@ -21,10 +21,19 @@ public enum Disposition
     /// <summary>The person already stands in another set.</summary>
     PersonInTwoSets,
 
+    /// <summary>The subject's samples name two arms.</summary>
+    InTwoArms,
+
+    /// <summary>The sample was taken on a day outside the window of its visit.</summary>
+    OutsideWindow,
+
     /// <summary>Another sample, earlier in the sheet, already stands in this place of the set; in matched sets: another of the same person.</summary>
     DuplicatePlace,
 
-    /// <summary>The set lacks the other role.</summary>
+    /// <summary>The subject had the same treatment in both periods, or two treatments in one.</summary>
+    SequenceUnclear,
+
+    /// <summary>The set lacks the other role; the subject lacks the visit or period it would be compared with.</summary>
     NoPartner,
 
     /// <summary>The set, in matched sets the reference person, breaks a promise of the matching and such are dropped.</summary>

@@ -29,6 +29,15 @@ public sealed record MatchingAudit
     /// <summary>Complete sets that break a promise of the matching, whether or not they are used.</summary>
     public required ToleranceBreach[] Breaches { get; init; }
 
+    /// <summary>Visits, arms, crossover: subjects by the places that they have samples in; null for other designs.</summary>
+    public PlacePatterns? Patterns { get; init; }
+
+    /// <summary>Visits whose day is not after that of the visit before, where the study names days.</summary>
+    public OrderBreach[] OutOfOrder { get; init; } = [];
+
+    /// <summary>Change by arm, crossover: how the two groups of subjects compare before treatment on the study's covariates.</summary>
+    public GroupBalance[] GroupBalance { get; init; } = [];
+
     /// <summary>Gates of the study file that the matching breaks; a run with any ends with exit code 3.</summary>
     public required BrokenGate[] BrokenGates { get; init; }
 
@@ -51,6 +60,9 @@ public sealed record MatchingAudit
         {
             { Kind: DesignKind.Pairs } => new PairsAudit(study, sheet, measured).Run(),
             { Kind: DesignKind.Sets } => new SetsAudit(study, sheet, measured).Run(),
+            { Kind: DesignKind.Visits } => new VisitsAudit(study, sheet, measured).Run(),
+            { Kind: DesignKind.ChangeByArm } => new ArmsAudit(study, sheet, measured).Run(),
+            { Kind: DesignKind.Crossover } => new CrossoverAudit(study, sheet, measured).Run(),
             _ => throw new ArgumentException($"There is no audit for a design of kind '{WrittenName.Of(study.Design.Kind)}'.", nameof(study)),
         };
 }

@@ -33,6 +33,9 @@ public sealed class Place
     /// <summary>Number of sets.</summary>
     public int Sets => _starts is null ? _first.Length : _starts.Length - 1;
 
+    /// <summary>True where a set has a sample here, with or without a value.</summary>
+    public bool Has(int set) => _starts is null ? _first[set] >= 0 : _starts[set + 1] > _starts[set];
+
     /// <summary>Takes an endpoint's values from its row, one a set; NaN where the set has none. Several samples: the mean of those that have a value.</summary>
     public void Gather(ReadOnlySpan<double> row, Span<double> values)
     {

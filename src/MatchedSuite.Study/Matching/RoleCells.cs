@@ -13,18 +13,20 @@ internal static class RoleCells
     public static string?[] Of(SheetCells cells, TwoGroups groups, string key)
     {
         string?[] roles = cells.Column(groups.Column, $"{key}.column");
-        RequireSeen(cells, groups, roles, groups.Index, $"{key}.index");
-        RequireSeen(cells, groups, roles, groups.Reference, $"{key}.reference");
+        RequireSeen(cells, groups.Column, roles, groups.Index, $"{key}.index");
+        RequireSeen(cells, groups.Column, roles, groups.Reference, $"{key}.reference");
         return roles;
     }
 
-    private static void RequireSeen(SheetCells cells, TwoGroups groups, string?[] roles, string wanted, string key)
+    /// <summary>Refuses a text of the study file that occurs in no row; the message says which texts do.</summary>
+    /// <exception cref="RefusalException">It occurs in none.</exception>
+    public static void RequireSeen(SheetCells cells, string column, string?[] texts, string wanted, string key)
     {
-        if (roles.Contains(wanted))
+        if (texts.Contains(wanted))
             return;
-        string[] seen = [.. roles.OfType<string>().Distinct().Order(StringComparer.Ordinal)];
+        string[] seen = [.. texts.OfType<string>().Distinct().Order(StringComparer.Ordinal)];
         throw new RefusalException(
-            $"{cells.File}, column '{groups.Column}'",
+            $"{cells.File}, column '{column}'",
             $"the value '{wanted}', which the study file names under '{key}', occurs in no row",
             seen.Length == 0 ? "a column that is not empty" : $"one of the values that occur: {Listing.Of(seen, ValuesShown)}",
             NearestName.Of(wanted, seen) is { } nearest ? $"Did you mean '{nearest}'?" : "");

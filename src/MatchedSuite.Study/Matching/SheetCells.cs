@@ -49,11 +49,24 @@ internal sealed class SheetCells
     /// <summary>A cell of a column as a finite number.</summary>
     /// <exception cref="RefusalException">It is none.</exception>
     public double Number(string column, int row, string text) =>
-        CellNumber.TryRead(_sheet, _dialect, text, out double value)
+        Number(column, row, text, "matches this column with 'within'", "Correct the cell, or write 'equal: true' for a column of categories.");
+
+    /// <summary>A cell of a column as a finite number.</summary>
+    /// <param name="column">Name of the column.</param>
+    /// <param name="row">Its row.</param>
+    /// <param name="text">The cell.</param>
+    /// <param name="use">What the study file does with the column, for the message.</param>
+    /// <param name="remedy">What to do where it is none.</param>
+    /// <exception cref="RefusalException">It is none.</exception>
+    public double Number(string column, int row, string text, string use, string remedy) =>
+        TryNumber(text, out double value)
             ? value
             : throw new RefusalException(
                 $"{Place(row)}, column '{column}'",
                 $"'{text}' is not a number",
-                "a decimal number or a missing mark, since the study file matches this column with 'within'",
-                "Correct the cell, or write 'equal: true' for a column of categories.");
+                $"a decimal number or a missing mark, since the study file {use}",
+                remedy);
+
+    /// <summary>True where a cell is a finite number.</summary>
+    public bool TryNumber(string text, out double value) => CellNumber.TryRead(_sheet, _dialect, text, out value);
 }
