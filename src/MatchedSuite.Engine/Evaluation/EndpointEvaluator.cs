@@ -54,7 +54,22 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
     /// <summary>Adds the endpoint's rows and details, and says how many of its values had no transform.</summary>
     protected abstract void AddRows(Span<double> values, EndpointInfo endpoint, BlockOutput output, out int undefined);
 
-    /// <summary>Brings values to the analysis scale in place, and says how many had no transform.</summary>
+    /// <summary>Puts the study's stand-in for values below the endpoint's detection limit.</summary>
+    /// <param name="values">The values; changed in place.</param>
+    /// <param name="endpoint">What is known of the endpoint.</param>
+    /// <param name="frame">Working memory that outlives the answer.</param>
+    /// <returns>For each value 1 above the limit, 0 below, NaN where missing; empty where the endpoint has no limit.</returns>
+    protected ReadOnlySpan<double> AboveLimit(Span<double> values, EndpointInfo endpoint, in Scratch.Frame frame)
+    {
+        if (endpoint.Kind != EndpointKind.Continuous || endpoint.DetectionLimit is not { } limit)
+            return [];
+        Span<double> above = frame.Doubles(values.Length);
+        BelowLimitRule.Above(limit, values, above);
+        BelowLimitRule.Apply(plan.Study.Endpoints.BelowLimit, limit, values);
+        return above;
+    }
+
+    /// <summary>Transforms values in place and counts those that have no transform and become missing.</summary>
     protected int Transformed(Transform transform, Span<double> values)
     {
         if (transform != Transform.RankNormal)
@@ -67,7 +82,10 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
     /// <param name="designed">Sets that the matching gives.</param>
     /// <param name="complete">Those of them with every value the comparison needs.</param>
     /// <param name="samples">Their samples.</param>
-    protected TestResult? UntestedBefore(int designed, int complete, int samples)
+    protected TestResult? UntestedBefore(int designed, int complete, int samples) => UntestedBefore(plan, designed, complete, samples);
+
+    /// <summary>The same for a plan.</summary>
+    internal static TestResult? UntestedBefore(AnalysisPlan plan, int designed, int complete, int samples)
     {
         if (complete < plan.Study.Analysis.MinimumSets)
             return TestResult.Untested(Outcome.TooFewSets, complete, samples);

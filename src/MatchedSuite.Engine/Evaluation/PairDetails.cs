@@ -17,14 +17,15 @@ internal static class PairDetails
         ReadOnlySpan<double> index, ReadOnlySpan<double> reference, PairContrast places, EndpointInfo endpoint, StrataSets strata, AnalysisPlan plan,
         RecordBuffer<DetailRow> details, Scratch scratch)
     {
-        bool isTwins = endpoint.Kind == EndpointKind.Continuous && TwinStrata.Are(plan.Arrangement.Strata);
+        bool isTwins = plan.Study.Design.Kind == DesignKind.Pairs && endpoint.Kind == EndpointKind.Continuous && TwinStrata.Are(plan.Arrangement.Strata);
         if (endpoint.Kind != EndpointKind.Binary && !isTwins)
             return;
-        for (short stratum = ResultRow.AllStrata; stratum < strata.Count; stratum++)
+        for (int position = 0; position < strata.Codes.Length; position++)
         {
+            short stratum = strata.Codes[position];
             using Scratch.Frame frame = scratch.Open();
             CompletePairs pairs = CompletePairs.Of(
-                index, reference, strata.SetsOf(stratum), places.Columns, CovariateUse.Ignored, plan.Study.Analysis.Zeros, frame);
+                index, reference, strata.SetsAt(position), places.Columns, CovariateUse.Ignored, plan.Study.Analysis.Zeros, frame);
             if (endpoint.Kind == EndpointKind.Binary && pairs.Count > 0)
                 AddRisks(PairedTable.Of(pairs.Input.Pairs), stratum, plan.Options, details);
             else if (isTwins && stratum != ResultRow.AllStrata)

@@ -19,6 +19,7 @@ public static class Available
         Families = Enum.GetValues<FamilyRule>().ToHashSet(),
         Intervals = new HashSet<IntervalKind> { IntervalKind.Fcr, IntervalKind.Simultaneous },
         IntervalsOfDesign = DesignTable.All.ToDictionary(design => design.Kind, design => design.Intervals),
+        Contrasts = Enum.GetValues<VisitContrast>().ToHashSet(),
         Keys = new HashSet<string>
         {
             "design.stratum", "design.covariates", "endpoints.below-limit", "endpoints.scale", "analysis.across", "analysis.intervals",

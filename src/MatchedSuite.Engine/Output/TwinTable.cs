@@ -3,6 +3,7 @@ using MatchedSuite.Engine.Planning;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics.Twins;
 using MatchedSuite.Storage.Tables;
+using MatchedSuite.Study.Definition;
 
 namespace MatchedSuite.Engine.Output;
 
@@ -34,7 +35,7 @@ internal sealed class TwinTable
     /// <summary>Writes the table from the numbers beside the results.</summary>
     public static void Write(RunFolder folder, RecordStore<DetailRow> details, AnalysisPlan plan, IReadOnlyList<string> names)
     {
-        if (!TwinStrata.Are(plan.Arrangement.Strata))
+        if (plan.Study.Design.Kind != DesignKind.Pairs || !TwinStrata.Are(plan.Arrangement.Strata))
             return;
         using var sink = new CsvTableSink(folder.PathOf("twins.csv"), Schema);
         var table = new TwinTable(sink, names);

@@ -87,7 +87,7 @@ public sealed class AnalysisPlan
     {
         ResultRow.AllStrata => "",
         ResultRow.BetweenStrata => "difference",
-        _ => Arrangement.Strata[stratum],
+        _ => _design.StratumNames.Count > 0 ? _design.StratumNames[stratum] : Arrangement.Strata[stratum],
     };
 
     /// <summary>Name of a used sample, by its position in a row of values.</summary>

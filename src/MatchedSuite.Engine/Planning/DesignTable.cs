@@ -20,6 +20,15 @@ public static class DesignTable
             Keys = ["design.reuse"],
             Intervals = [IntervalKind.Profile],
         },
+        new(DesignKind.Visits, inputs => new VisitsDesign(inputs), VisitMethodTable.NamesFor)
+        {
+            Keys = ["design.visit.window", "design.person-time", "analysis.zeros"],
+        },
+        new(DesignKind.ChangeByArm, inputs => new ArmsDesign(inputs), ArmMethodTable.NamesFor)
+        {
+            Keys = ["design.visit.window", "design.person-time", "analysis.zeros"],
+        },
+        new(DesignKind.Crossover, inputs => new CrossoverDesign(inputs), CrossoverMethodTable.NamesFor),
     ];
 
     /// <summary>The entry of a study's kind of design.</summary>

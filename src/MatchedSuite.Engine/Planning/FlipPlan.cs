@@ -1,5 +1,4 @@
 using MatchedSuite.Engine.Evaluation;
-using MatchedSuite.Engine.Rows;
 using MatchedSuite.Statistics.Multiplicity.Resampling;
 
 namespace MatchedSuite.Engine.Planning;
@@ -27,17 +26,18 @@ public sealed record FlipPlan(FlipStatistic Statistic, IReadOnlyList<FlipSection
         return null;
     }
 
-    /// <summary>The parts of a design whose contrasts all have the same sets: all of them, then those of each stratum.</summary>
-    internal static IReadOnlyList<FlipSection> SectionsOf(int contrasts, StrataSets strata)
+    /// <summary>The parts of a design: for each contrast all of its sets, then those of each stratum.</summary>
+    /// <param name="contrasts">The sets of each contrast; null where nothing is flipped for it.</param>
+    internal static IReadOnlyList<FlipSection> SectionsOf(IReadOnlyList<StrataSets?> contrasts)
     {
         var sections = new List<FlipSection>();
         int offset = 0;
-        for (short contrast = 0; contrast < contrasts; contrast++)
+        for (short contrast = 0; contrast < contrasts.Count; contrast++)
         {
-            for (short stratum = ResultRow.AllStrata; stratum < strata.Count; stratum++)
+            for (int position = 0; position < (contrasts[contrast]?.Codes.Length ?? 0); position++)
             {
-                int sets = strata.SetsOf(stratum).Length;
-                sections.Add(new FlipSection(contrast, stratum, offset, sets));
+                int sets = contrasts[contrast]!.SetsAt(position).Length;
+                sections.Add(new FlipSection(contrast, contrasts[contrast]!.Codes[position], offset, sets));
                 offset += sets;
             }
         }

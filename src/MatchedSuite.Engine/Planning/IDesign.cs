@@ -17,6 +17,9 @@ public interface IDesign
     /// <summary>The values that evaluators keep of each endpoint when sets are flipped, one part a contrast and stratum; none where they keep none.</summary>
     IReadOnlyList<FlipSection> FlipSections => [];
 
+    /// <summary>Names of the strata and groups that rows name by position, where they are others than the arrangement's strata; else empty.</summary>
+    IReadOnlyList<string> StratumNames => [];
+
     /// <summary>An evaluator for one worker.</summary>
     EndpointEvaluator NewEvaluator(AnalysisPlan plan);
 }

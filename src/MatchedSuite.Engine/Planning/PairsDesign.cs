@@ -10,7 +10,7 @@ namespace MatchedSuite.Engine.Planning;
 public sealed class PairsDesign : IDesign
 {
     /// <summary>Compares values above with values below a detection limit where most values are below.</summary>
-    private const string AboveBelowMethod = "mcnemar-exact";
+    internal const string AboveBelowMethod = "mcnemar-exact";
 
     private readonly MethodCodes _codes = new();
     private readonly Dictionary<EndpointKind, PlannedMethod[]> _methods;
@@ -25,7 +25,7 @@ public sealed class PairsDesign : IDesign
         Place reference = arrangement.Places[1];
         Comparisons = [new PairContrast(contrast, index, reference, PairColumns.Of(inputs, index, reference))];
         Contrasts = [contrast];
-        FlipSections = FlipPlan.SectionsOf(Contrasts.Count, StrataSets.Of(arrangement));
+        FlipSections = FlipPlan.SectionsOf([StrataSets.Of(arrangement)]);
         _methods = study.Analysis.Methods.ToDictionary(
             of => of.Key,
             of => of.Value.Select((name, position) => Planned(name, position == 0)).ToArray());

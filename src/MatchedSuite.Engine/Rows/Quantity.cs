@@ -89,4 +89,76 @@ public enum Quantity : short
 
     /// <summary>Decimal logarithm of that.</summary>
     CategoriesLog10P,
+
+    /// <summary>Greenhouse and Geisser's ε of the visits.</summary>
+    GreenhouseGeisserEpsilon,
+
+    /// <summary>Huynh and Feldt's ε of the visits, not cut at 1.</summary>
+    HuynhFeldtEpsilon,
+
+    /// <summary>Mauchly's W: 1 where all differences between visits have one variance.</summary>
+    MauchlyW,
+
+    /// <summary>Its p-value.</summary>
+    MauchlyP,
+
+    /// <summary>Kendall's W: agreement of the subjects on the order of the visits.</summary>
+    KendallW,
+
+    /// <summary>Iman and Davenport's F of Friedman's test.</summary>
+    ImanDavenportF,
+
+    /// <summary>Its p-value.</summary>
+    ImanDavenportP,
+
+    /// <summary>Page's L as a standard normal deviate.</summary>
+    PageZ,
+
+    /// <summary>Mixed model: variance between subjects.</summary>
+    VarianceBetween,
+
+    /// <summary>Mixed model: variance within subjects.</summary>
+    VarianceWithin,
+
+    /// <summary>Mean of the index arm at the reference visit.</summary>
+    BaselineIndexMean,
+
+    /// <summary>Its standard deviation.</summary>
+    BaselineIndexSd,
+
+    /// <summary>Mean of the reference arm at the reference visit.</summary>
+    BaselineReferenceMean,
+
+    /// <summary>Its standard deviation.</summary>
+    BaselineReferenceSd,
+
+    /// <summary>Difference of these means over the root mean square of the two standard deviations.</summary>
+    BaselineStandardisedDifference,
+
+    /// <summary>Analysis of covariance: follow-up per unit of baseline within arms.</summary>
+    BaselineSlope,
+
+    /// <summary>Crossover: second period minus first.</summary>
+    PeriodEffect,
+
+    /// <summary>Its lower confidence limit.</summary>
+    PeriodEffectLow,
+
+    /// <summary>Its upper confidence limit.</summary>
+    PeriodEffectHigh,
+
+    /// <summary>Its t.</summary>
+    PeriodT,
+
+    /// <summary>Its p-value.</summary>
+    PeriodP,
+
+    /// <summary>Crossover: difference of the subjects' totals between the sequences.</summary>
+    CarryOver,
+
+    /// <summary>Its t.</summary>
+    CarryOverT,
+
+    /// <summary>Its p-value; no analysis should be chosen by it.</summary>
+    CarryOverP,
 }

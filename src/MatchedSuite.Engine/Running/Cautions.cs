@@ -14,7 +14,7 @@ internal static class Cautions
         "Linking removes what the members of a set share; what still differs between them besides the role can explain a difference.";
 
     private const string BeforeAfter =
-        "Both samples of a set come from the same person: a change without a control group may be time itself, ageing, season or the "
+        "The samples of a set come from the same person: a change without a control group may be time itself, ageing, season or the "
         + "regression of extreme values, whatever the treatment.";
 
     private const string MatchedSets =
@@ -33,6 +33,15 @@ internal static class Cautions
     private const string MembersMissing =
         "A member without the value leaves its set, and a set left without one of the roles leaves with it; this is fair only where values are missing for reasons unrelated to them.";
 
+    private const string Arms =
+        "The change of one arm less that of the other is an effect of treatment only where chance put the subjects into the arms; otherwise "
+        + "whatever else differs between the arms can explain it. The paired results of each arm alone cannot tell treatment from time, and "
+        + "that one arm changes significantly and the other does not is no test of their difference.";
+
+    private const string CarryOver =
+        "A crossover supposes that nothing of the first treatment lasts into the second period. The test of carry-over has little power: "
+        + "do not choose the analysis by it.";
+
     private const string MissingValues =
         "A set without both values is left out for that endpoint; this is fair only where values are missing for reasons unrelated to them.";
 
@@ -43,7 +52,12 @@ internal static class Cautions
     public static IReadOnlyList<string> For(StudyDefinition study, Arrangement arrangement, bool someValuesMissing)
     {
         var cautions = new List<string> { Screen };
-        cautions.Add(SamePerson(study.Design) ? BeforeAfter : Confounding);
+        cautions.Add(study.Design.Kind switch
+        {
+            DesignKind.ChangeByArm => Arms,
+            DesignKind.Crossover => CarryOver,
+            _ => SamePerson(study.Design) ? BeforeAfter : Confounding,
+        });
         bool isSets = study.Design.Kind == DesignKind.Sets;
         if (isSets)
             cautions.AddRange([MatchedSets, MatchedOn, AfterTheFact]);

@@ -33,11 +33,14 @@ public sealed record StudyCheck
         foreach (string column in LinkingColumns.Of(study))
             ColumnNames.Find(study.Data.Samples, sheet, column);
         EndpointCatalogue catalogue = EndpointCatalogue.Read(study);
+        IReadOnlyList<string> unmade = VisitComparisons.Check(study, catalogue);
+        if (study.Design.Kind == DesignKind.ChangeByArm)
+            ArmsDesign.Check(study, catalogue);
         AdjustmentRules.Check(study, catalogue);
         string shape = study.Data.Values is { } values
             ? ShapeOf(study, catalogue, values, TextTable.ReadHeader(values, study.Data.Dialect))
             : SampleRowsShape(study, catalogue, sheet);
-        return new StudyCheck { Study = study, SheetColumns = sheet.Count, ValuesShape = shape, Warnings = catalogue.Warnings };
+        return new StudyCheck { Study = study, SheetColumns = sheet.Count, ValuesShape = shape, Warnings = [.. catalogue.Warnings, .. unmade] };
     }
 
     private static string ShapeOf(StudyDefinition study, EndpointCatalogue catalogue, string path, IReadOnlyList<string> header)

@@ -7,6 +7,7 @@ public static class KnownNames
     private sealed record Method(string Name, EndpointKind[] Kinds, DesignKind[] Designs);
 
     private static readonly DesignKind[] PairsAndVisits = [DesignKind.Pairs, DesignKind.Visits];
+    private static readonly DesignKind[] PairsVisitsAndArms = [DesignKind.Pairs, DesignKind.Visits, DesignKind.ChangeByArm];
     private static readonly EndpointKind[] Measured = [EndpointKind.Continuous];
     private static readonly EndpointKind[] Signs = [EndpointKind.Binary];
     private static readonly EndpointKind[] Codes = [EndpointKind.Ordinal];
@@ -17,12 +18,12 @@ public static class KnownNames
 
     private static readonly Method[] Catalogue =
     [
-        new("paired-t", Measured, PairsAndVisits),
-        new("moderated-paired-t", Measured, PairsAndVisits),
-        new("signed-rank", MeasuredOrCodes, PairsAndVisits),
-        new("sign", MeasuredOrCodes, PairsAndVisits),
-        new("sign-flip", Measured, PairsAndVisits),
-        new("trimmed-mean", Measured, PairsAndVisits),
+        new("paired-t", Measured, PairsVisitsAndArms),
+        new("moderated-paired-t", Measured, PairsVisitsAndArms),
+        new("signed-rank", MeasuredOrCodes, PairsVisitsAndArms),
+        new("sign", MeasuredOrCodes, PairsVisitsAndArms),
+        new("sign-flip", Measured, PairsVisitsAndArms),
+        new("trimmed-mean", Measured, PairsVisitsAndArms),
         new(WithinPairSlope, Measured, [DesignKind.Pairs]),
         new("mcnemar", Signs, PairsAndVisits),
         new("mcnemar-corrected", Signs, PairsAndVisits),
@@ -30,7 +31,7 @@ public static class KnownNames
         new("mcnemar-midp", Signs, PairsAndVisits),
         new("stuart-maxwell", Codes, PairsAndVisits),
         new("bowker", Codes, PairsAndVisits),
-        new("paired-poisson", Events, PairsAndVisits),
+        new("paired-poisson", Events, PairsVisitsAndArms),
         new(ConditionalLogistic, Any, [DesignKind.Sets, DesignKind.Pairs]),
         new("within-set-linear", Measured, [DesignKind.Sets]),
         new("within-set-robust", Measured, [DesignKind.Sets]),
@@ -91,4 +92,15 @@ public static class KnownNames
             (DesignKind.Crossover, EndpointKind.Binary) => ["mainland-gart"],
             _ => [],
         };
+
+    /// <summary>The method taken for a comparison of all visits where a study file names none for the kind; null where there is none.</summary>
+    public static string? UsualMethod(VisitContrast contrast, EndpointKind endpoint) => (contrast, endpoint) switch
+    {
+        (VisitContrast.Omnibus, EndpointKind.Continuous) => "rm-anova",
+        (VisitContrast.Omnibus, EndpointKind.Binary) => "cochran-q",
+        (VisitContrast.Omnibus, _) => "friedman",
+        (VisitContrast.Trend, EndpointKind.Continuous) => "linear-trend",
+        (VisitContrast.Trend, EndpointKind.Ordinal or EndpointKind.Count) => "page-trend",
+        _ => null,
+    };
 }

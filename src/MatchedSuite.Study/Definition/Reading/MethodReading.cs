@@ -62,7 +62,10 @@ internal static class MethodReading
         string[] available = Suitable(kind, design, capabilities.MethodsFor(design.Kind, kind));
         if (design.Exposure is not null)
             return available;
-        return capabilities.DefaultMethods.TryGetValue((design.Kind, kind), out var usual) ? usual : [];
+        IReadOnlyList<string> usual = capabilities.DefaultMethods.TryGetValue((design.Kind, kind), out var methods) ? methods : [];
+        if (design.Kind != DesignKind.Visits)
+            return usual;
+        return [.. usual, .. design.Contrasts.Select(contrast => KnownNames.UsualMethod(contrast, kind)).OfType<string>().Where(available.Contains)];
     }
 
     // A measured exposure has one method, which nothing else has.
