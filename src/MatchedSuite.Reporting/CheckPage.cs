@@ -20,6 +20,7 @@ public static class CheckPage
         };
         if (study.Design.Role is { } role)
             lines.Add(("contrast", $"{role.Column}: '{role.Index}' compared with '{role.Reference}' within {study.Design.Set}"));
+        lines.AddRange(DesignLines.Of(study.Design));
         if (study.Design.Stratum is { } stratum)
             lines.Add(("strata", stratum));
         if (study.Design.Covariates.Count > 0)

@@ -7,11 +7,17 @@ namespace MatchedSuite.Reporting;
 /// <summary>What the numbers of an effect are: a difference in which unit, a ratio of what.</summary>
 internal static class ScaleText
 {
+    private static readonly string Trend = WrittenName.Of(VisitContrast.Trend);
+
     /// <summary>The scale of a row's effect, in a few words.</summary>
     public static string Of(SummaryRow row, EndpointSection endpoints)
     {
+        if (double.IsNaN(row.Row.Estimate))
+            return "–";
         bool perDeviation = endpoints.PerStandardDeviation && row.Endpoint.Kind == EndpointKind.Continuous;
         string unit = perDeviation ? "SD" : row.Endpoint.Unit ?? "";
+        if (row.Contrast == Trend)
+            return (LogBase)row.Row.LogBase != LogBase.None ? "ratio per unit of time" : $"{(unit.Length > 0 ? $"slope, {unit}" : "slope")} per unit of time";
         if ((LogBase)row.Row.LogBase == LogBase.None)
             return unit.Length > 0 ? $"difference, {unit}" : "difference";
         if (row.Method == KnownNames.ConditionalLogistic)

@@ -34,7 +34,7 @@ public static class VisitComparisons
                     continue;
                 string[] suitable = [.. VisitMethodTable.NamesFor(kind).Where(name => VisitMethodTable.FormsOf(name).HasFlag(comparison.Form))];
                 if (suitable.Length == 0)
-                    sentences.Add($"no method compares {WrittenName.Of(kind)} endpoints by '{comparison.Name}'; they have no row for it");
+                    sentences.Add($"no method compares {WrittenName.Of(kind)} endpoints by '{comparison.Name}'; they have no row for it.");
                 else
                     throw Refusal(study, kind, comparison, suitable);
             }
