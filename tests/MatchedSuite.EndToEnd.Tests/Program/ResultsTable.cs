@@ -37,6 +37,19 @@ internal sealed class ResultsTable
     public double Number(string endpoint, string method, string column) =>
         double.Parse(Text(endpoint, method, column), CultureInfo.InvariantCulture);
 
+    /// <summary>The row of an endpoint, contrast, stratum and method.</summary>
+    public int Row(string endpoint, string contrast, string stratum, string method)
+    {
+        (string Column, string Value)[] wanted = [("endpoint", endpoint), ("contrast", contrast), ("stratum", stratum), ("method", method)];
+        int row = _rows.FindIndex(cells => wanted.All(of => cells[Array.IndexOf(_header, of.Column)] == of.Value));
+        Assert.True(row >= 0, $"There is no row of {endpoint} by {method} in '{contrast}' and stratum '{stratum}'.");
+        return row;
+    }
+
+    /// <summary>One number of a row; NaN where the cell is empty.</summary>
+    public double Number(int row, string column) =>
+        Text(row, column) is { Length: > 0 } text ? double.Parse(text, CultureInfo.InvariantCulture) : double.NaN;
+
     private int Find(string endpoint, string method)
     {
         int row = _rows.FindIndex(cells =>
