@@ -107,6 +107,23 @@ public sealed class VisitStudyTests : IDisposable
     }
 
     [Fact]
+    public void The_demo_finds_what_was_planted_and_shows_every_blemish()
+    {
+        using var folder = new StudyFolder();
+        Finished run = folder.Run("demo", "--design", "visits", "--out", "demo");
+        Assert.True(run.ExitCode == 0, run.Error);
+        Dictionary<string, bool> planted = File.ReadAllLines(folder.At("demo/truth.csv")).Skip(1).Select(line => line.Split(',')).ToDictionary(cells => cells[0], cells => cells[1] != "0");
+        ResultsTable results = folder.Results("demo/results");
+        int[] found = [.. Enumerable.Range(0, results.Rows).Where(row =>
+            results.Text(row, "contrast") == "week30-start" && results.Text(row, "stratum").Length == 0 && results.Text(row, "primary") == "true" && results.Text(row, "rejected_holm") == "true")];
+        Assert.True(found.Count(row => planted[results.Text(row, "endpoint")]) >= 10, $"{found.Length} found");
+        Assert.True(found.Count(row => !planted[results.Text(row, "endpoint")]) <= 1);
+        string matching = folder.Read("demo/results/audit/matching.md");
+        Assert.All((string[])["role-missing", "outside-window", "duplicate-place", "no-partner"], code => Assert.Contains(code, matching, StringComparison.Ordinal));
+        Assert.Contains("sal-44", folder.Read("demo/results/audit/untested.csv"), StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Strata_have_rows_of_their_own_and_estimates_are_compared_between_them()
     {
         _folder.Change("visits.yaml", "  contrasts:", "  stratum: sex\n  contrasts:");

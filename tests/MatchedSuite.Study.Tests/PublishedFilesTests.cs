@@ -41,6 +41,20 @@ public partial class PublishedFilesTests
         Assert.Equal([IntervalKind.Profile], full.Analysis.Intervals);
     }
 
+    [Theory]
+    [InlineData("visits.yaml", DesignKind.Visits)]
+    [InlineData("change-by-arm.yaml", DesignKind.ChangeByArm)]
+    [InlineData("crossover.yaml", DesignKind.Crossover)]
+    public void The_templates_for_subjects_are_study_files_and_ones_too_with_their_comments_taken_at_their_word(string template, DesignKind kind)
+    {
+        StudyDefinition plain = StudyFolder.Read(Published(template));
+        Assert.Equal((kind, "participant"), (plain.Design.Kind, plain.Design.Subject));
+        StudyDefinition full = StudyFolder.Read(CommentedKey().Replace(Published(template), "$1$2"));
+        Assert.NotNull(full.Design.Stratum);
+        Assert.Equal(kind != DesignKind.Crossover, full.Design.Visit?.Window is not null);
+        Assert.NotNull(full.Endpoints.Dictionary);
+    }
+
     [Fact]
     public void Every_study_file_on_the_page_is_read_and_every_design_is_among_them()
     {

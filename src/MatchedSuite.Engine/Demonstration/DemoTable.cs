@@ -10,5 +10,6 @@ public static class DemoTable
     [
         (DesignKind.Pairs, folder => TwinDemo.Write(folder)),
         (DesignKind.Sets, folder => SetDemo.Write(folder)),
+        (DesignKind.Visits, folder => VisitDemo.Write(folder)),
     ];
 }
