@@ -80,26 +80,16 @@ public static class RiskDifference
     private static double UpperScoreLimit(double b, double c, double n, double z)
     {
         double estimate = (b - c) / n;
-        double Excess(double difference)
-        {
-            double lacking = (n * difference) - (b - c);
-            return lacking - (z * Math.Sqrt(n * Math.Max(0, (2 * ReferenceOnlyShare(b, c, n, difference)) + (difference * (1 - difference)))));
-        }
-
-        if (z == 0 || Excess(1) <= 0)
+        if (z == 0 || Excess(b, c, n, z, 1) <= 0)
             return z == 0 ? estimate : 1;
         // Where all pairs are of one kind the score has no spread at the estimate itself; a step beyond it has.
-        double from = Excess(estimate) < 0 ? estimate : estimate + SmallStep;
-        return Halved(Excess, from, 1);
-    }
-
-    // Halves until the middle is one of the ends; the score rises through zero once between them.
-    private static double Halved(Func<double, double> rising, double low, double high)
-    {
+        double low = Excess(b, c, n, z, estimate) < 0 ? estimate : estimate + SmallStep;
+        double high = 1;
+        // Halves until the middle is one of the ends; the score rises through zero once between them.
         double middle = low + ((high - low) / 2);
         while (middle > low && middle < high)
         {
-            if (rising(middle) < 0)
+            if (Excess(b, c, n, z, middle) < 0)
                 low = middle;
             else
                 high = middle;
@@ -107,6 +97,13 @@ public static class RiskDifference
         }
 
         return middle;
+    }
+
+    // The score's distance beyond z, in pairs.
+    private static double Excess(double b, double c, double n, double z, double difference)
+    {
+        double lacking = (n * difference) - (b - c);
+        return lacking - (z * Math.Sqrt(n * Math.Max(0, (2 * ReferenceOnlyShare(b, c, n, difference)) + (difference * (1 - difference)))));
     }
 
     // Most likely probability of a pair of the kind c where the difference of proportions is fixed.

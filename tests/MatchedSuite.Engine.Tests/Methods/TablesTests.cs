@@ -16,6 +16,17 @@ public class TablesTests
     }
 
     [Fact]
+    public void The_methods_for_subjects_are_known_names_for_the_kinds_they_say()
+    {
+        foreach (EndpointKind kind in Enum.GetValues<EndpointKind>())
+        {
+            Assert.Equal(KnownNames.MethodsFor(DesignKind.Visits, kind).Order(), VisitMethodTable.NamesFor(kind).Order());
+            Assert.Equal(KnownNames.MethodsFor(DesignKind.ChangeByArm, kind).Order(), ArmMethodTable.NamesFor(kind).Order());
+            Assert.Equal(KnownNames.MethodsFor(DesignKind.Crossover, kind).Order(), CrossoverMethodTable.NamesFor(kind).Order());
+        }
+    }
+
+    [Fact]
     public void No_name_stands_twice()
     {
         Assert.Equal(PairMethodTable.All.Count, PairMethodTable.All.Select(method => method.Name).Distinct().Count());
