@@ -112,8 +112,10 @@ public static class MatchingPage
         }
 
         int outside = audit.Breaches.Select(breach => breach.Set).Distinct().Count();
-        table.Row("tolerance", outside == 1 ? "1 set outside match-on" : $"{Count(outside)} sets outside match-on", WrittenName.Of(gates.Tolerance), ToleranceResult(gates.Tolerance, outside, audit));
-        Add(page, "Gates", table.ToString());
+        if (audit.Patterns is null)
+            table.Row("tolerance", outside == 1 ? "1 set outside match-on" : $"{Count(outside)} sets outside match-on", WrittenName.Of(gates.Tolerance), ToleranceResult(gates.Tolerance, outside, audit));
+        if (audit.Patterns is null || gates.UnmatchedAtMost is not null)
+            Add(page, "Gates", table.ToString());
         if (gates.MissingAtMost is { } missing)
             page.Append(Invariant($"\n`missing-at-most` ({100 * missing:0.##}%) is held endpoint by endpoint, in a run that reads the values.\n"));
     }

@@ -13,7 +13,7 @@ public static class RunSentences
     {
         var sentences = new List<string>
         {
-            $"{NumberText.Count(run.Plan.Arrangement.Sets.Length)} sets ({NumberText.Count(run.Plan.Arrangement.Rows.Length)} of "
+            $"{NumberText.Count(run.Plan.Arrangement.Sets.Length)} {(run.Audit.Patterns is null ? "sets" : "subjects")} ({NumberText.Count(run.Plan.Arrangement.Rows.Length)} of "
             + $"{NumberText.Count(run.Audit.Dispositions.Length)} samples), {NumberText.Count(run.Endpoints)} endpoints, "
             + $"{NumberText.Count(run.TestedRows)} tested, {NumberText.Count(run.PrimaryRows - run.TestedRows)} not (audit/untested.csv).",
         };
