@@ -107,6 +107,58 @@ public sealed class VisitStudyTests : IDisposable
     }
 
     [Fact]
+    public void Max_t_flips_the_subjects_of_each_comparison_as_it_flips_pairs()
+    {
+        const string Exclude = "exclude: [ascites, hepatomegaly, spiders, ";
+        _folder.Change("visits.yaml", "exclude: [", Exclude);
+        _folder.Change("visits.yaml", "contrasts: [each-vs-reference, successive, trend, omnibus]", "contrasts: [each-vs-reference]");
+        _folder.Change("visits.yaml", "adjust: [holm, bh]", "adjust: [holm, max-t, min-p]");
+        _folder.Change("visits.yaml", "  dictionary: endpoints.csv", "  dictionary: unsigned.csv");
+        _folder.Write("unsigned.csv", string.Join('\n', File.ReadAllLines(_folder.At("endpoints.csv")).Where(line => !line.Contains("binary", StringComparison.Ordinal))));
+        _folder.Change("study.yaml", "exclude: [", Exclude);
+        _folder.Change("study.yaml", "adjust: [holm, bh]", "adjust: [holm, max-t, min-p]");
+        _folder.Change("study.yaml", "  dictionary: endpoints.csv", "  dictionary: unsigned.csv");
+        Finished visits = _folder.Run("analyze", "visits.yaml", "--out", "visits", "--seed", "5");
+        Finished pairs = _folder.Run("analyze", "study.yaml", "--out", "pairs", "--seed", "5");
+        Assert.True(visits.ExitCode == 0 && pairs.ExitCode == 0, visits.Error + pairs.Error);
+        ResultsTable found = _folder.Results("visits");
+        ResultsTable expected = _folder.Results("pairs");
+        int compared = 0;
+        for (int row = 0; row < expected.Rows; row++)
+        {
+            if (expected.Text(row, "primary") != "true")
+                continue;
+            int other = found.Row(expected.Text(row, "endpoint"), "year1-baseline", "", expected.Text(row, "method"));
+            Assert.Equal(expected.Text(row, "p_max_t"), found.Text(other, "p_max_t"));
+            Assert.Equal(expected.Text(row, "p_min_p"), found.Text(other, "p_min_p"));
+            Assert.NotEqual("", found.Text(other, "p_max_t"));
+            compared++;
+        }
+
+        Assert.Equal(9, compared);
+    }
+
+    [Fact]
+    public void Max_t_refuses_comparisons_whose_primary_method_does_not_flip()
+    {
+        _folder.Change("visits.yaml", "adjust: [holm, bh]", "adjust: [max-t]");
+        Finished run = _folder.Run("check", "visits.yaml");
+        Assert.Equal(2, run.ExitCode);
+        Assert.Contains("'mixed-model', the primary method of continuous endpoints", run.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void Hypotheses_of_all_comparisons_are_adjusted_together_on_request()
+    {
+        _folder.Change("visits.yaml", "adjust: [holm, bh]", "adjust: [bonferroni]\n  across: contrasts");
+        Assert.Equal(0, _folder.Run("analyze", "visits.yaml", "--out", "across").ExitCode);
+        ResultsTable results = _folder.Results("across");
+        int[] primary = [.. Enumerable.Range(0, results.Rows).Where(row => results.Text(row, "primary") == "true" && results.Text(row, "p_value").Length > 0)];
+        Assert.Equal((7 * 12) - 3, primary.Length);
+        Assert.All(primary, row => Assert.Equal(Math.Min(1, primary.Length * results.Number(row, "p_value")), results.Number(row, "p_bonferroni"), 1e-12));
+    }
+
+    [Fact]
     public void The_demo_finds_what_was_planted_and_shows_every_blemish()
     {
         using var folder = new StudyFolder();

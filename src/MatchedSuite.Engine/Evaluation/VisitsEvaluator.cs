@@ -17,8 +17,7 @@ internal sealed class VisitsEvaluator : EndpointEvaluator
     private readonly StrataRows _between;
     private readonly MixedModelResults _mixed;
 
-    // Subjects whose samples a comparison of two visits, or one of all visits, or the mixed model can use.
-    private readonly StrataSets?[] _both;
+    // Subjects whose samples a comparison of all visits, or the mixed model can use.
     private readonly StrataSets _complete;
     private readonly StrataSets _all;
 
@@ -29,7 +28,6 @@ internal sealed class VisitsEvaluator : EndpointEvaluator
         _design = design;
         _pairs = new PairRows(plan, design.AboveBelow, Scratch);
         _between = new StrataRows(arrangement.Strata.Length, plan.Options);
-        _both = [.. design.Pairs.Select(pair => pair is null ? null : StrataSets.Of(arrangement, set => pair.Index.Has(set) && pair.Reference.Has(set)))];
         _complete = StrataSets.Of(arrangement, set => arrangement.Places.All(place => place.Has(set)));
         _all = StrataSets.Of(arrangement);
         _mixed = new MixedModelResults(plan, design.Comparisons, _all.Codes.Length, Scratch);
@@ -111,19 +109,21 @@ internal sealed class VisitsEvaluator : EndpointEvaluator
         foreach (PlannedVisitMethod planned in _design.MethodsFor(endpoint.Kind, comparison))
         {
             if (planned.Pairs is { } method)
-                _pairs.AddMethod(index, reference, pair!, _both[comparison]!, method, endpoint, output);
+                _pairs.AddMethod(index, reference, pair!, _design.SeenAtBoth[comparison]!, method, endpoint, output);
             else if (planned.Visits!.Test is { } test)
                 AddComplete(bySubject, planned, test, endpoint, output);
             else
                 AddMixedModel(comparison, describes, planned, endpoint, output);
         }
 
+        if (pair is not null && Plan.Flips is { } flips)
+            _pairs.KeepDifferences(index, reference, pair, _design.SeenAtBoth[comparison]!, comparison, _design.MethodsFor(endpoint.Kind, comparison)[0].Pairs!.Method.Flips!, flips, output);
         if (pair is not null && endpoint.Kind == EndpointKind.Binary)
-            PairDetails.Add(index, reference, pair, endpoint, _both[comparison]!, Plan, output.Details, Scratch);
+            PairDetails.Add(index, reference, pair, endpoint, _design.SeenAtBoth[comparison]!, Plan, output.Details, Scratch);
         if (Plan.Study.Endpoints.PerStandardDeviation && endpoint.Kind == EndpointKind.Continuous && form.Form != VisitForms.Omnibus)
             StandardScale.Apply(byVisit.Slice(_design.Reference * subjects, subjects), output.Rows.Records[before..], Scratch);
         if (pair is not null && !above.IsEmpty)
-            _pairs.AddAboveBelow(above, pair, _both[comparison]!, endpoint, before, output);
+            _pairs.AddAboveBelow(above, pair, _design.SeenAtBoth[comparison]!, endpoint, before, output);
     }
 
     private void AddComplete(ReadOnlySpan<double> bySubject, PlannedVisitMethod planned, VisitTest test, EndpointInfo endpoint, BlockOutput output)

@@ -115,7 +115,11 @@ internal static class AdjustmentRules
     }
 
     private static IEnumerable<(EndpointKind Kind, string Method)> PrimaryMethods(StudyDefinition study, EndpointCatalogue catalogue) =>
-        catalogue.Kinds.Where(study.Analysis.Methods.ContainsKey).Order().Select(kind => (kind, study.Analysis.Methods[kind][0]));
+        catalogue.Kinds.Where(study.Analysis.Methods.ContainsKey).Order().SelectMany(kind => PrimaryMethods(study, kind).Select(method => (kind, method)));
+
+    // Each comparison of visits has a primary method of its own.
+    private static IEnumerable<string> PrimaryMethods(StudyDefinition study, EndpointKind kind) =>
+        study.Design.Kind == DesignKind.Visits ? VisitComparisons.PrimaryMethods(study, kind) : [study.Analysis.Methods[kind][0]];
 
     private static RefusalException Refusal(StudyDefinition study, string key, string found, string expected, string remedy) =>
         new($"{Path.GetFileName(study.Path)}, key '{key}'", found, expected, remedy);

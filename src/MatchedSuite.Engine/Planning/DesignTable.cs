@@ -22,6 +22,7 @@ public static class DesignTable
         },
         new(DesignKind.Visits, inputs => new VisitsDesign(inputs), VisitMethodTable.NamesFor)
         {
+            FlipOf = name => VisitMethodTable.Named(name) is null ? PairMethodTable.Named(name).Flips : null,
             Keys = ["design.visit.window", "design.person-time", "analysis.zeros"],
         },
         new(DesignKind.ChangeByArm, inputs => new ArmsDesign(inputs), ArmMethodTable.NamesFor)

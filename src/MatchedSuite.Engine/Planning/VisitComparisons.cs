@@ -18,6 +18,10 @@ public static class VisitComparisons
             ? [.. names.Where(name => VisitMethodTable.FormsOf(name).HasFlag(form))]
             : [];
 
+    /// <summary>The primary methods of a kind of endpoint over all comparisons.</summary>
+    public static IEnumerable<string> PrimaryMethods(StudyDefinition study, EndpointKind kind) =>
+        Of(study.Design).Select(comparison => MethodsFor(study, kind, comparison.Form)).Where(names => names.Count > 0).Select(names => names[0]).Distinct();
+
     /// <summary>Refuses a comparison that none of the methods named for a kind of endpoint makes although there are some that do.</summary>
     /// <returns>One sentence for each kind and comparison that no method at all can make.</returns>
     /// <exception cref="RefusalException">Names the methods that would do.</exception>

@@ -22,6 +22,8 @@ public sealed class VisitsDesign : IDesign
         Comparisons = VisitComparisons.Of(study.Design);
         Contrasts = [.. Comparisons.Select(comparison => comparison.Name)];
         Pairs = [.. Comparisons.Select(comparison => PairOf(comparison, inputs, arrangement))];
+        SeenAtBoth = [.. Pairs.Select(pair => pair is null ? null : StrataSets.Of(arrangement, set => pair.Index.Has(set) && pair.Reference.Has(set)))];
+        FlipSections = FlipPlan.SectionsOf(SeenAtBoth);
         _methods = study.Analysis.Methods.Keys.ToDictionary(
             kind => kind, kind => Comparisons.Select(comparison => Planned(study, kind, comparison.Form)).ToArray());
         if (inputs.Catalogue.HasDetectionLimits)
@@ -48,6 +50,12 @@ public sealed class VisitsDesign : IDesign
 
     /// <inheritdoc/>
     public IReadOnlyList<string> Warnings { get; }
+
+    /// <inheritdoc/>
+    public IReadOnlyList<FlipSection> FlipSections { get; }
+
+    /// <summary>For each comparison of two visits the subjects seen at both; null for the others.</summary>
+    internal IReadOnlyList<StrataSets?> SeenAtBoth { get; }
 
     /// <summary>Position of the reference visit.</summary>
     public int Reference { get; }
