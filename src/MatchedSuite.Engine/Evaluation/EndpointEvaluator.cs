@@ -85,13 +85,20 @@ public abstract class EndpointEvaluator(AnalysisPlan plan)
     protected TestResult? UntestedBefore(int designed, int complete, int samples) => UntestedBefore(plan, designed, complete, samples);
 
     /// <summary>The same for a plan.</summary>
-    internal static TestResult? UntestedBefore(AnalysisPlan plan, int designed, int complete, int samples)
+    internal static TestResult? UntestedBefore(AnalysisPlan plan, int designed, int complete, int samples) =>
+        UntestedBefore(plan, complete, samples, (designed - complete) / (double)designed);
+
+    /// <summary>The same for a method that uses sets of which some samples lack a value.</summary>
+    /// <param name="plan">The plan.</param>
+    /// <param name="sets">Sets it uses.</param>
+    /// <param name="samples">Samples it uses.</param>
+    /// <param name="missing">Share of what the matching gives that lacks a value.</param>
+    internal static TestResult? UntestedBefore(AnalysisPlan plan, int sets, int samples, double missing)
     {
-        if (complete < plan.Study.Analysis.MinimumSets)
-            return TestResult.Untested(Outcome.TooFewSets, complete, samples);
-        double missing = (designed - complete) / (double)designed;
+        if (sets < plan.Study.Analysis.MinimumSets)
+            return TestResult.Untested(Outcome.TooFewSets, sets, samples);
         return missing > (plan.Study.Gates.MissingAtMost ?? 1)
-            ? TestResult.Untested(Outcome.TooManyMissing, complete, samples)
+            ? TestResult.Untested(Outcome.TooManyMissing, sets, samples)
             : null;
     }
 }

@@ -22,11 +22,12 @@ internal sealed class MixedModelResults(AnalysisPlan plan, IReadOnlyList<VisitCo
     /// <summary>Fits one row of strata.</summary>
     /// <param name="position">Which row.</param>
     /// <param name="sample">Its subjects.</param>
-    public void Fit(int position, in VisitSample sample)
+    /// <param name="designed">Samples that the matching gives of them.</param>
+    public void Fit(int position, in VisitSample sample, int designed)
     {
         using Scratch.Frame frame = scratch.Open();
         MixedModelFit fit = MixedModel.Fit(sample, VisitTerm.Means, frame);
-        TestResult? untested = EndpointEvaluator.UntestedBefore(plan, sample.Subjects, fit.Subjects, fit.Observations);
+        TestResult? untested = EndpointEvaluator.UntestedBefore(plan, fit.Subjects, fit.Observations, (designed - fit.Observations) / (double)designed);
         for (int comparison = 0; comparison < comparisons.Count; comparison++)
             _results[position, comparison] = untested ?? Test(fit, comparisons[comparison]);
         bool isFitted = untested is null && fit.Outcome == Outcome.Tested;

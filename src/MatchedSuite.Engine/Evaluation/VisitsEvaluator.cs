@@ -20,6 +20,7 @@ internal sealed class VisitsEvaluator : EndpointEvaluator
     // Subjects whose samples a comparison of all visits, or the mixed model can use.
     private readonly StrataSets _complete;
     private readonly StrataSets _all;
+    private readonly int[] _samples;
 
     public VisitsEvaluator(AnalysisPlan plan, VisitsDesign design)
         : base(plan)
@@ -30,6 +31,13 @@ internal sealed class VisitsEvaluator : EndpointEvaluator
         _between = new StrataRows(arrangement.Strata.Length, plan.Options);
         _complete = StrataSets.Of(arrangement, set => arrangement.Places.All(place => place.Has(set)));
         _all = StrataSets.Of(arrangement);
+        _samples = new int[_all.Codes.Length];
+        for (int position = 0; position < _samples.Length; position++)
+        {
+            foreach (int subject in _all.SetsAt(position))
+                _samples[position] += arrangement.Places.Count(place => place.Has(subject));
+        }
+
         _mixed = new MixedModelResults(plan, design.Comparisons, _all.Codes.Length, Scratch);
     }
 
@@ -93,7 +101,7 @@ internal sealed class VisitsEvaluator : EndpointEvaluator
             VisitSample sample = VisitSample.Of(Picked(bySubject, Visits, subjects, frame), _design.Times);
             if (_design.Covariates.Count > 0)
                 sample = sample.WithCovariates(Picked(_design.Covariates.Values, Visits * _design.Covariates.Count, subjects, frame), _design.Covariates.Count);
-            _mixed.Fit(position, sample);
+            _mixed.Fit(position, sample, _samples[position]);
         }
     }
 
