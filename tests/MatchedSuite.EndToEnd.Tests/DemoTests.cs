@@ -29,6 +29,16 @@ public class DemoTests
     }
 
     [Fact]
+    public void The_demo_never_writes_over_a_study_of_somebody_else()
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        string study = folder.Read("study.yaml");
+        Finished run = folder.Run("demo", "--out", ".");
+        Assert.Equal(2, run.ExitCode);
+        Assert.Equal(study, folder.Read("study.yaml"));
+    }
+
+    [Fact]
     public void The_demo_study_is_the_same_every_time()
     {
         using var folder = new StudyFolder();

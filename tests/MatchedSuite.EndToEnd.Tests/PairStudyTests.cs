@@ -111,6 +111,33 @@ public class PairStudyTests
     }
 
     [Fact]
+    public void The_standardised_mean_difference_has_limits_when_asked_for()
+    {
+        using StudyFolder folder = Study("");
+        folder.Change("study.yaml", "analysis: {", "analysis: {intervals: [effect-size], ");
+        Analyse(folder);
+        DetailsTable details = DetailsTable.Read(folder.At("results/details.parquet"));
+
+        // Base R 4.2.2: its noncentral t is good to about seven digits here.
+        Assert.Equal(Expected("crp", 6), details["crp", "paired-t", "effect-size-low"], 1e-6);
+        Assert.Equal(Expected("crp", 7), details["crp", "paired-t", "effect-size-high"], 1e-6);
+    }
+
+    [Fact]
+    public void Counts_of_replicates_are_never_averaged()
+    {
+        using StudyFolder folder = Study("  replicates: mean\n");
+        folder.Write("samples.csv", folder.Read("samples.csv") + "s9,p1,yes,24.1,no,MZ,12,10\n");
+        string[] lines = folder.Read("panel.csv").Trim().Split('\n');
+        folder.Write("panel.csv", lines[0] + ",s9\nspells," + string.Join(',', Enumerable.Repeat("3,2", 8)) + ",4\n");
+        folder.Change("study.yaml", "continuous: [paired-t, signed-rank]", "count: [paired-poisson]");
+        folder.Change("study.yaml", "analysis:", "endpoints: {kind: count}\nanalysis:");
+        Finished run = folder.Run("analyze", "study.yaml");
+        Assert.Equal(2, run.ExitCode);
+        Assert.Contains("design.replicates", run.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Counts_are_compared_per_time_at_risk()
     {
         using StudyFolder folder = Study("  person-time: months\n");

@@ -38,10 +38,20 @@ internal static class DemoCommand
         return AnalyzeCommand.Run(study, new RunOptions(), voice, cancellation);
     }
 
+    // An earlier demo is written again; anybody else's files are left alone.
+    private static void RefuseStrangers(string folder)
+    {
+        if (!Directory.Exists(folder) || !Directory.EnumerateFileSystemEntries(folder).Any() || File.Exists(Path.Combine(folder, "truth.csv")))
+            return;
+        throw new RefusalException(
+            folder, "the folder holds files that are no demo study", "an empty folder, an earlier demo, or nothing", "Choose another folder with --out.");
+    }
+
     private static string WriteStudy(string folder, Func<string, string> write)
     {
         try
         {
+            RefuseStrangers(folder);
             Directory.CreateDirectory(folder);
             return write(folder);
         }

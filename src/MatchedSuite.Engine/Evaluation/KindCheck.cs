@@ -15,12 +15,18 @@ internal static class KindCheck
     /// <summary>Checks one endpoint's values, in the order of the arrangement's rows.</summary>
     public static void Run(ReadOnlySpan<double> values, EndpointInfo endpoint, AnalysisPlan plan)
     {
+        if (endpoint.Kind == EndpointKind.Count && plan.Arrangement.Places.Any(place => place.HasReplicates))
+            throw MeanOfCounts(endpoint);
         for (int i = 0; i < values.Length; i++)
         {
             if (!double.IsNaN(values[i]) && !Fits(values[i], endpoint.Kind))
                 throw Refusal(values[i], endpoint, plan.SampleName(i), plan.ValuesFile);
         }
     }
+
+    private static RefusalException MeanOfCounts(EndpointInfo endpoint) => new(
+        "design.replicates", $"'mean' would average the events of the count endpoint '{endpoint.Name}'",
+        "'first' or 'refuse' in a study with counts", "Or leave the endpoint out, or give it another kind.");
 
     private static bool Fits(double value, EndpointKind kind) => kind switch
     {

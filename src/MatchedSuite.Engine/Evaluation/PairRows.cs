@@ -14,6 +14,7 @@ namespace MatchedSuite.Engine.Evaluation;
 internal sealed class PairRows(AnalysisPlan plan, PlannedMethod? aboveBelow, Scratch scratch)
 {
     private readonly StrataRows _between = new(plan.Arrangement.Strata.Length, plan.Options);
+    private readonly bool _effectIntervals = plan.Study.Analysis.Intervals.Contains(IntervalKind.EffectSize);
 
     /// <summary>Adds one method's rows: stratum by stratum, then the comparison between strata.</summary>
     /// <param name="index">Values of the index place on the analysis scale, one a set; NaN where missing.</param>
@@ -40,6 +41,8 @@ internal sealed class PairRows(AnalysisPlan plan, PlannedMethod? aboveBelow, Scr
             row.Stratum = strata.Codes[position];
             row.Missing = pairs.Designed - pairs.Count;
             row.Take(result);
+            if (_effectIntervals && covariates == CovariateUse.Ignored && row.IsTested && planned.Method.EffectInterval is { } interval)
+                AddInterval(interval(result, plan.Options), new DetailSink(output, contrast: 0, row.Stratum, planned.Code));
             if (strata.Comparable && row.Stratum != ResultRow.AllStrata)
                 _between.Keep(row.Stratum, result, pairs.Input.Pairs, endpoint.Kind);
         }
@@ -53,6 +56,12 @@ internal sealed class PairRows(AnalysisPlan plan, PlannedMethod? aboveBelow, Scr
             row.LogBase = (short)logBase;
             row.Remarks |= unadjusted;
         }
+    }
+
+    private static void AddInterval(Interval interval, DetailSink details)
+    {
+        details.Add(Quantity.EffectSizeLow, interval.Low);
+        details.Add(Quantity.EffectSizeHigh, interval.High);
     }
 
     /// <summary>Keeps what the primary method flips; its untested rows are no hypotheses, whatever is kept of them.</summary>

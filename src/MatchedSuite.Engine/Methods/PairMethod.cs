@@ -14,6 +14,9 @@ public delegate TestResult PairTest(in PairInput input, TestOptions options, Scr
 /// <param name="Test">The test itself.</param>
 public sealed record PairMethod(string Name, IReadOnlyList<EndpointKind> Kinds, EstimateScale Scale, StrataComparison Strata, PairTest Test)
 {
+    /// <summary>Interval of its effect size, on request; null where it has none.</summary>
+    public Func<TestResult, TestOptions, Interval>? EffectInterval { get; init; }
+
     /// <summary>What it does with covariates.</summary>
     public CovariateUse Covariates { get; init; } = CovariateUse.Ignored;
 

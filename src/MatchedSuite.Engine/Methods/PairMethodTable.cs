@@ -16,7 +16,7 @@ public static class PairMethodTable
     /// <summary>Every method, the usual first choice of a kind before the others.</summary>
     public static IReadOnlyList<PairMethod> All { get; } =
     [
-        new("paired-t", Continuous, EstimateScale.Analysis, StrataComparison.Means, PairedMean) { Covariates = CovariateUse.Adjusted, Flips = FlipRule.Differences },
+        new("paired-t", Continuous, EstimateScale.Analysis, StrataComparison.Means, PairedMean) { Covariates = CovariateUse.Adjusted, Flips = FlipRule.Differences, EffectInterval = StandardisedMean },
         new(ModeratedFinish.Method, Continuous, EstimateScale.Analysis, StrataComparison.None, Plain(PairedT.Run)),
         new("signed-rank", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, SignedRanks) { Flips = FlipRule.SignedRanks },
         new("sign", Ordered, EstimateScale.Analysis, StrataComparison.Estimates, Plain(SignTest.Run)),
@@ -50,6 +50,9 @@ public static class PairMethodTable
         input.Covariates.IsEmpty
             ? PairedT.Run(input.Pairs, options, scratch)
             : AdjustedPairedT.Run(RegressionPairs.WithCovariates(input.Pairs, input.Covariates), options, scratch);
+
+    private static Interval StandardisedMean(TestResult result, TestOptions options) =>
+        EffectSizeInterval.Of(result.Statistic, result.Sets, options);
 
     private static TestResult SignedRanks(in PairInput input, TestOptions options, Scratch scratch) =>
         input.Zeros == ZeroRule.Pratt

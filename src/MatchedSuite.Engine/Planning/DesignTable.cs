@@ -14,6 +14,7 @@ public static class DesignTable
         {
             FlipOf = name => PairMethodTable.Named(name).Flips,
             Keys = ["design.exposure", "design.person-time", "analysis.zeros"],
+            Intervals = [IntervalKind.EffectSize],
         },
         new(DesignKind.Sets, inputs => new SetsDesign(inputs), SetMethodTable.NamesFor)
         {
@@ -24,6 +25,7 @@ public static class DesignTable
         {
             FlipOf = name => VisitMethodTable.Named(name) is null ? PairMethodTable.Named(name).Flips : null,
             Keys = ["design.visit.window", "design.person-time", "analysis.zeros"],
+            Intervals = [IntervalKind.EffectSize],
         },
         new(DesignKind.ChangeByArm, inputs => new ArmsDesign(inputs), ArmMethodTable.NamesFor)
         {

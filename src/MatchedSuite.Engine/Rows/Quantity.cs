@@ -161,4 +161,10 @@ public enum Quantity : short
 
     /// <summary>Its p-value; no analysis should be chosen by it.</summary>
     CarryOverP,
+
+    /// <summary>Lower limit of the standardised mean difference, by the noncentral t.</summary>
+    EffectSizeLow,
+
+    /// <summary>Upper limit of the standardised mean difference, by the noncentral t.</summary>
+    EffectSizeHigh,
 }

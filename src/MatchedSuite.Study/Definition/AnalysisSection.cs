@@ -40,7 +40,7 @@ public sealed record AnalysisSection
     public IReadOnlyList<IntervalKind> Intervals { get; init; } = [];
 
     /// <summary>Those of them whose confidence depends on how many endpoints there are.</summary>
-    public IReadOnlyList<IntervalKind> IntervalsOverEndpoints => [.. Intervals.Where(kind => kind != IntervalKind.Profile)];
+    public IReadOnlyList<IntervalKind> IntervalsOverEndpoints => [.. Intervals.Where(kind => kind is IntervalKind.Fcr or IntervalKind.Simultaneous)];
 
     /// <summary>True where the hypotheses of all contrasts are adjusted together.</summary>
     public bool AcrossContrasts { get; init; }

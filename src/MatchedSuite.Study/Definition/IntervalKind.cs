@@ -11,4 +11,7 @@ public enum IntervalKind
 
     /// <summary>By the profile likelihood, for likelihood methods.</summary>
     Profile,
+
+    /// <summary>Of the standardised mean difference, by the noncentral t.</summary>
+    EffectSize,
 }

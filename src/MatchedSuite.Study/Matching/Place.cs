@@ -30,6 +30,9 @@ public sealed class Place
     /// <summary>Name of the role or visit, as it stands in the data.</summary>
     public string Name { get; }
 
+    /// <summary>True where some set has several samples in this place.</summary>
+    public bool HasReplicates => _starts is not null;
+
     /// <summary>Number of sets.</summary>
     public int Sets => _starts is null ? _first.Length : _starts.Length - 1;
 
