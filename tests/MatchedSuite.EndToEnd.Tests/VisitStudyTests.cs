@@ -139,6 +139,25 @@ public sealed class VisitStudyTests : IDisposable
     }
 
     [Fact]
+    public void A_covariate_that_never_changes_is_named_once_and_adjusts_the_mixed_model_alone()
+    {
+        _folder.Change("visits.yaml", "  contrasts:", "  covariates: [age]\n  contrasts:");
+        _folder.Change("visits.yaml", "exclude: [arm, age, sex]", "exclude: [arm, sex]");
+        Finished run = _folder.Run("analyze", "visits.yaml", "--out", "adjusted");
+        Assert.True(run.ExitCode == 0, run.Error);
+        Assert.Single(run.Error.Split('\n'), line => line.Contains("covariate 'age' does not change between the visits of 'month6-baseline', 'year1-baseline'", StringComparison.Ordinal));
+        ResultsTable adjusted = _folder.Results("adjusted");
+        ResultsTable plain = _folder.Results();
+        int pairs = adjusted.Row("albumin", "year1-baseline", "", "paired-t");
+        Assert.Equal(plain.Number(plain.Row("albumin", "year1-baseline", "", "paired-t"), "estimate"), adjusted.Number(pairs, "estimate"), 1e-12);
+        Assert.Contains("collinear-covariate", adjusted.Text(pairs, "flags"), StringComparison.Ordinal);
+        int mixed = adjusted.Row("albumin", "year1-baseline", "", "mixed-model");
+        Assert.NotEqual(plain.Number(plain.Row("albumin", "year1-baseline", "", "mixed-model"), "estimate"), adjusted.Number(mixed, "estimate"));
+        Assert.DoesNotContain("unadjusted", adjusted.Text(mixed, "flags"), StringComparison.Ordinal);
+        Assert.Contains("unadjusted", adjusted.Text(adjusted.Row("albumin", "omnibus", "", "friedman"), "flags"), StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Max_t_refuses_comparisons_whose_primary_method_does_not_flip()
     {
         _folder.Change("visits.yaml", "adjust: [holm, bh]", "adjust: [max-t]");

@@ -31,9 +31,7 @@ public sealed class VisitsDesign : IDesign
         Reference = study.Design.Visit!.ReferencePosition;
         Times = VisitTimes.Of(study.Design.Visit.Order);
         Covariates = SubjectCovariates.Of(inputs);
-        IEnumerable<string> collinear = Pairs.OfType<PairContrast>().SelectMany(pair => pair.Columns.CollinearNames().Select(name =>
-            $"covariate '{name}' does not change between the visits of '{pair.Name}' or follows from the others; paired results are not adjusted for it"));
-        Warnings = [.. sentences, .. collinear];
+        Warnings = [.. sentences, .. UnchangingCovariates()];
     }
 
     /// <summary>The comparisons, in output order.</summary>
@@ -74,6 +72,14 @@ public sealed class VisitsDesign : IDesign
 
     /// <inheritdoc/>
     public EndpointEvaluator NewEvaluator(AnalysisPlan plan) => new VisitsEvaluator(plan, this);
+
+    // The mixed model adjusts for a covariate that never changes; differences cannot.
+    private IEnumerable<string> UnchangingCovariates() =>
+        Pairs.OfType<PairContrast>()
+            .SelectMany(pair => pair.Columns.CollinearNames().Select(name => (Covariate: name, Comparison: $"'{pair.Name}'")))
+            .GroupBy(of => of.Covariate)
+            .Select(of => $"covariate '{of.Key}' does not change between the visits of {string.Join(", ", of.Select(pair => pair.Comparison))} "
+                + "or follows from the others; paired results are not adjusted for it.");
 
     private static PairContrast? PairOf(VisitComparison comparison, StudyInputs inputs, Arrangement arrangement)
     {
