@@ -27,6 +27,11 @@ kernel() { "$@" | awk '/kernel seconds/ { n = $NF; if (n ~ /^[0-9]+$/ && NF > 3)
 # A step of our run, in seconds, as the manifest has it.
 step() { python3 -c 'import json, sys; print("%.6f" % (json.load(open(sys.argv[1]))["execution"]["steps_milliseconds"][sys.argv[2]] / 1000))' "$1/out/run.json" "$2"; }
 
+# Seconds per endpoint that our threads together needed for testing 500 endpoints, reading not counted as in the scripts' kernels:
+# the time of all threads over their number.
+evaluation() { python3 -c 'import json, sys; e = json.load(open(sys.argv[1]))["execution"]; print("%.6f" % (e["evaluation_thread_milliseconds"] / e["threads"] / 1000 / 500))' "$1/out/run.json"; }
+least_evaluation() { for _ in $(seq "$rounds"); do "$matched" analyze "$1/study.yaml" --quiet; evaluation "$1"; done | sort -n | head -1; }
+
 ratio() { awk -v theirs="$1" -v ours="$2" 'BEGIN { printf "%.1f", theirs / ours }'; }
 row() { printf '%-52s %10s %10s %8s\n' "$@"; }
 
@@ -52,11 +57,9 @@ for precision in float64 float32; do
 done
 
 theirs=$(kernel Rscript "$scripts/sets_r.R" "$work/sets" 20)
-"$matched" analyze "$work/sets/study.yaml" --quiet
-ours=$(awk -v s="$(step "$work/sets" tests)" 'BEGIN { printf "%.6f", s / 500 }')
-row "sets, conditional-logistic, per endpoint, base R" "$theirs" "$ours" "$(ratio "$theirs" "$ours")"
+ours=$(least_evaluation "$work/sets")
+row "sets, conditional-logistic, kernel per endpoint, R" "$theirs" "$ours" "$(ratio "$theirs" "$ours")"
 
 theirs=$(kernel Rscript "$scripts/visits_r.R" "$work/visits" 100)
-"$matched" analyze "$work/visits/study.yaml" --quiet
-ours=$(awk -v s="$(step "$work/visits" tests)" 'BEGIN { printf "%.6f", s / 500 }')
-row "visits, mixed-model, per endpoint, base R" "$theirs" "$ours" "$(ratio "$theirs" "$ours")"
+ours=$(least_evaluation "$work/visits")
+row "visits, mixed-model, kernel per endpoint, R" "$theirs" "$ours" "$(ratio "$theirs" "$ours")"
