@@ -187,7 +187,13 @@ internal ref struct ConditionalModel
         double quantile = StandardNormal.UpperQuantile(options.TailShare);
         bool byProfile = interval == ConditionalInterval.Profile || double.IsNaN(standardError);
         double low, high;
-        if (byProfile)
+        if (quantile == 0)
+        {
+            // Half the confidence on one side ends at the estimate itself, wherever that is.
+            low = estimate;
+            high = estimate;
+        }
+        else if (byProfile)
         {
             int exposure = _columns - 1;
             double level = fit.LogLikelihood - (quantile * quantile / 2);
