@@ -22,6 +22,8 @@ public static class AlignedRank
     private const double Zero = 1e-11;
     private const double RelativeWidth = 1e-12;
     private const int MostSteps = 400;
+    private const int Forwards = 1;
+    private const int Backwards = -1;
 
     // The search for a bracket starts at this part of the farthest shift and doubles.
     private const double FirstReach = 64;
@@ -48,14 +50,14 @@ public static class AlignedRank
         remarks |= ranks.Ties ? Remarks.Ties : Remarks.None;
 
         double quantile = StandardNormal.UpperQuantile(options.TailShare);
-        double low = options.Sides == Sides.Less ? double.NegativeInfinity : FirstAtMost(ref ranks, z, quantile);
-        double high = options.Sides == Sides.Greater ? double.PositiveInfinity : LastAtLeast(ref ranks, z, -quantile);
+        double low = options.Sides == Sides.Less ? double.NegativeInfinity : FirstAtMost(ref ranks, Forwards, z, quantile);
+        double high = options.Sides == Sides.Greater ? double.PositiveInfinity : -FirstAtMost(ref ranks, Backwards, -z, quantile);
         bool wide = (options.Sides != Sides.Less && double.IsInfinity(low)) || (options.Sides != Sides.Greater && double.IsInfinity(high));
         return new TestResult
         {
             Sets = sets.Sets,
             Samples = sets.Members,
-            Estimate = (FirstAtMost(ref ranks, z, Zero) + LastAtLeast(ref ranks, z, -Zero)) / 2,
+            Estimate = (FirstAtMost(ref ranks, Forwards, z, Zero) - FirstAtMost(ref ranks, Backwards, -z, Zero)) / 2,
             Interval = new Interval(low, high),
             Statistic = z,
             P = Tails.ForSides(options.Sides, StandardNormal.LowerTail(z), StandardNormal.UpperTail(z)),
@@ -63,30 +65,23 @@ public static class AlignedRank
         };
     }
 
-    // The statistic falls with the shift: the smallest shift with a statistic of at most the level.
-    private static double FirstAtMost(ref AlignedRanks ranks, double atZero, double level)
+    // The statistic falls with the shift: the smallest shift with a statistic of at most the level. Backwards, roles and shifts are
+    // mirrored, so that swapping the roles takes the same steps; where the statistic is not quite monotone, that decides.
+    private static double FirstAtMost(ref AlignedRanks ranks, int direction, double atZero, double level)
     {
-        var (left, right) = Bracket(ref ranks, atZero, level);
-        return double.IsInfinity(left.Shift) ? left.Shift : Narrow(ref ranks, left, right, level).Right;
-    }
-
-    // The largest shift with a statistic of at least the level, which is: above the next smaller number.
-    private static double LastAtLeast(ref AlignedRanks ranks, double atZero, double level)
-    {
-        double threshold = Math.BitDecrement(level);
-        var (left, right) = Bracket(ref ranks, atZero, threshold);
-        return double.IsInfinity(right.Shift) ? right.Shift : Narrow(ref ranks, left, right, threshold).Left;
+        var (left, right) = Bracket(ref ranks, direction, atZero, level);
+        return double.IsInfinity(left.Shift) ? left.Shift : Narrow(ref ranks, direction, left, right, level).Right;
     }
 
     // Two shifts, the left with a statistic above the threshold, the right with one at or below it; an end is infinite where none is.
-    private static (Point Left, Point Right) Bracket(ref AlignedRanks ranks, double atZero, double threshold)
+    private static (Point Left, Point Right) Bracket(ref AlignedRanks ranks, int direction, double atZero, double threshold)
     {
         var known = new Point(0, atZero);
         bool above = atZero > threshold;
         for (double reach = ranks.Reach / FirstReach; reach <= ranks.Reach; reach *= 2)
         {
             double shift = above ? reach : -reach;
-            var next = new Point(shift, ranks.StandardisedAt(shift));
+            var next = new Point(shift, direction * ranks.StandardisedAt(direction * shift));
             if (next.Statistic > threshold != above)
                 return above ? (known, next) : (next, known);
             known = next;
@@ -95,7 +90,7 @@ public static class AlignedRank
         return above ? (known, new Point(double.PositiveInfinity, 0)) : (new Point(double.NegativeInfinity, 0), known);
     }
 
-    private static (double Left, double Right) Narrow(ref AlignedRanks ranks, Point left, Point right, double threshold)
+    private static (double Left, double Right) Narrow(ref AlignedRanks ranks, int direction, Point left, Point right, double threshold)
     {
         double tolerance = RelativeWidth * ranks.Range;
         for (int step = 0; step < MostSteps && right.Shift - left.Shift > tolerance; step++)
@@ -112,7 +107,7 @@ public static class AlignedRank
             };
             if (!(shift > left.Shift && shift < right.Shift))
                 shift = left.Shift + (width / 2);
-            var next = new Point(shift, ranks.StandardisedAt(shift));
+            var next = new Point(shift, direction * ranks.StandardisedAt(direction * shift));
             if (next.Statistic > threshold)
                 left = next;
             else
