@@ -35,7 +35,7 @@ internal sealed class AdjustedCounts
     }
 
     /// <summary>The result of the run.</summary>
-    public ResamplingResult ToResult(CommonFlips flips, double criticalValue) => new()
+    public ResamplingResult ToResult(ISignPatterns flips, double criticalValue) => new()
     {
         StepDown = _stepDown,
         SingleStep = _singleStep,

@@ -5,7 +5,7 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 
 /// <summary>The flips of whole sets that a run compares the data with: random ones, or all there are where these are no more.</summary>
 /// <remarks>A flip is one bit a set, 1 for a changed sign. The data as they are (no bit set) is not among the listed ones.</remarks>
-internal sealed class CommonFlips
+internal sealed class CommonFlips : ISignPatterns
 {
     private readonly long _seed;
 
@@ -17,21 +17,36 @@ internal sealed class CommonFlips
         Words = (sets + 63) / 64;
     }
 
-    /// <summary>B, the number of flips beside the data as they are.</summary>
+    /// <inheritdoc/>
     public int Count { get; }
 
-    /// <summary>True where all flips are listed.</summary>
+    /// <inheritdoc/>
     public bool Exhaustive { get; }
 
-    /// <summary>Words of 64 sets that hold one flip.</summary>
+    /// <inheritdoc/>
     public int Words { get; }
 
-    /// <summary>Writes flip number <paramref name="flip"/>, from 0; set i is bit i mod 64 of word i/64. Bits beyond the last set are arbitrary.</summary>
+    /// <inheritdoc/>
     public void Fill(int flip, Span<ulong> words)
     {
         if (Exhaustive)
             words[0] = (ulong)flip + 1;
         else
             CounterRandom.Fill(_seed, RandomPurpose.SignFlips, flip, words[..Words]);
+    }
+
+    /// <inheritdoc/>
+    public double Variance(ReadOnlySpan<double> differences, double power)
+    {
+        double squares = 0;
+        foreach (double difference in differences)
+        {
+            if (double.IsNaN(difference))
+                continue;
+            double scaled = difference * power;
+            squares += scaled * scaled;
+        }
+
+        return squares;
     }
 }

@@ -4,8 +4,8 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// <remarks>
 /// <para>Flips change the sum S of an endpoint's differences but never n or Q = Σd². With r = S/√(n·Q), t² = (n − 1)·r²/(1 − r²).
 /// Endpoints are compared by t, and t grows with w = t²/(N − 1 + t²), N the number of all sets, which stays within [−1, 1] and is
-/// r² itself where no set is missing: w = r²/(1 + k − k·r²), k = (N − n)/(n − 1). Scores use r = S/√Q and k = 0. One-sided
-/// statistics keep the sign of S.</para>
+/// r² itself where no set is missing: w = r²/(1 + k − k·r²), k = (N − n)/(n − 1). Scores use r = S/√Q and k = 0; where labels
+/// move, Q is the variance of S over them. One-sided statistics keep the sign of S.</para>
 /// <para>All sums are of differences times a power of two, so that no unit of measurement overflows or loses digits.</para>
 /// </remarks>
 internal readonly struct EndpointScale
@@ -55,7 +55,8 @@ internal readonly struct EndpointScale
     /// <summary>Measures one endpoint.</summary>
     /// <param name="differences">N differences, NaN where missing.</param>
     /// <param name="options">What is compared, in which direction.</param>
-    public static EndpointScale Of(ReadOnlySpan<double> differences, ResamplingOptions options)
+    /// <param name="patterns">The sign patterns it is followed through.</param>
+    public static EndpointScale Of(ReadOnlySpan<double> differences, ResamplingOptions options, ISignPatterns patterns)
     {
         double largest = 0;
         int sets = 0;
@@ -71,17 +72,17 @@ internal readonly struct EndpointScale
         if (largest == 0 || (isT && sets < 2))
             return default;
         double power = Math.ScaleB(1, Math.Min(LargestExponent, -Math.ILogB(largest)));
-        double magnitude = 0, squares = 0, sum = 0;
+        double magnitude = 0, sum = 0;
         foreach (double difference in differences)
         {
             if (double.IsNaN(difference))
                 continue;
             double scaled = difference * power;
             magnitude += Math.Abs(scaled);
-            squares += scaled * scaled;
             sum += scaled;
         }
 
+        double squares = patterns.Variance(differences, power);
         double factor = 1 / Math.Sqrt(isT ? sets * squares : squares);
         double bend = isT ? (double)(differences.Length - sets) / (sets - 1) : 0;
         double directed = options.Sides == Sides.Less ? -sum : sum;

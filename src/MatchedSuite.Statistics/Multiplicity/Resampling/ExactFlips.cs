@@ -14,10 +14,10 @@ internal sealed class ExactFlips
 
     private readonly ScaledEndpoints _endpoints;
     private readonly Thresholds _thresholds;
-    private readonly CommonFlips _flips;
+    private readonly ISignPatterns _flips;
     private readonly SortedDictionary<int, OpenFlip> _open = [];
 
-    public ExactFlips(ScaledEndpoints endpoints, Thresholds thresholds, CommonFlips flips)
+    public ExactFlips(ScaledEndpoints endpoints, Thresholds thresholds, ISignPatterns flips)
     {
         _endpoints = endpoints;
         _thresholds = thresholds;

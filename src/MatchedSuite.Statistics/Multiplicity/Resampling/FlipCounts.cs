@@ -33,7 +33,7 @@ internal sealed class FlipCounts
     }
 
     /// <summary>One byte for every eight sets of every flip.</summary>
-    public static byte[] PatternsOf(CommonFlips flips, int sets)
+    public static byte[] PatternsOf(ISignPatterns flips, int sets)
     {
         int groups = Groups(sets);
         var patterns = new byte[groups * flips.Count];

@@ -43,7 +43,7 @@ internal sealed class FlipTables
     }
 
     /// <summary>Takes the sign patterns of a block of flips.</summary>
-    public void TakeFlips(CommonFlips flips, int first, int count)
+    public void TakeFlips(ISignPatterns flips, int first, int count)
     {
         for (int flip = 0; flip < count; flip++)
         {

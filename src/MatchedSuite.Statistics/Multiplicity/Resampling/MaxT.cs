@@ -27,8 +27,13 @@ public static class MaxT
         ArgumentNullException.ThrowIfNull(store);
         ArgumentNullException.ThrowIfNull(options);
         options.Validate();
-        var endpoints = new ScaledEndpoints(store, options, cancellation);
-        var flips = new CommonFlips(store.Sets, options.Seed, options.Resamples);
+        return Run(store, new CommonFlips(store.Sets, options.Seed, options.Resamples), options, cancellation);
+    }
+
+    /// <summary>The same through any sign patterns that leave the null hypothesis as it is.</summary>
+    internal static ResamplingResult Run(IDifferenceStore store, ISignPatterns flips, ResamplingOptions options, CancellationToken cancellation)
+    {
+        var endpoints = new ScaledEndpoints(store, flips, options, cancellation);
         var thresholds = new Thresholds(endpoints);
         var maxima = new double[flips.Count];
         Array.Fill(maxima, double.NegativeInfinity);
@@ -48,7 +53,7 @@ public static class MaxT
     }
 
     private static List<(int Flip, int Position)> FollowAll(QuantizedPanel panel, ScaledEndpoints endpoints, Thresholds thresholds,
-        CommonFlips flips, double[] maxima, int[] counts, CancellationToken cancellation)
+        ISignPatterns flips, double[] maxima, int[] counts, CancellationToken cancellation)
     {
         var undecided = new List<(int, int)>();
         int threads = endpoints.Options.Threads;
@@ -75,7 +80,7 @@ public static class MaxT
         return undecided;
     }
 
-    private static ResamplingResult Result(ScaledEndpoints endpoints, CommonFlips flips, Thresholds thresholds,
+    private static ResamplingResult Result(ScaledEndpoints endpoints, ISignPatterns flips, Thresholds thresholds,
         int[] stepDown, int[] singleStep, double critical)
     {
         var result = new AdjustedCounts(endpoints.All, flips.Count);

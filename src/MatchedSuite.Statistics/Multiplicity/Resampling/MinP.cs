@@ -26,8 +26,8 @@ public static class MinP
         ArgumentNullException.ThrowIfNull(store);
         ArgumentNullException.ThrowIfNull(options);
         options.Validate();
-        var endpoints = new ScaledEndpoints(store, options, cancellation);
         var flips = new CommonFlips(store.Sets, options.Seed, options.Resamples);
+        var endpoints = new ScaledEndpoints(store, flips, options, cancellation);
         byte[] patterns = FlipCounts.PatternsOf(flips, store.Sets);
         var parallel = new ParallelOptions { MaxDegreeOfParallelism = options.Threads, CancellationToken = cancellation };
         var observed = new int[endpoints.Count];

@@ -1,12 +1,12 @@
 namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 
-/// <summary>How the flips of a resampling adjustment are drawn and compared.</summary>
+/// <summary>How the flips or relabelings of a resampling adjustment are drawn and compared.</summary>
 public sealed record ResamplingOptions
 {
-    /// <summary>Seed of the flips.</summary>
+    /// <summary>Seed of the flips or relabelings.</summary>
     public long Seed { get; init; }
 
-    /// <summary>Random flips beside the data as they are; all 2^sets flips are listed instead where these are no more.</summary>
+    /// <summary>Random flips or relabelings beside the data as they are; where all there are, the data included, number at most one more, they are listed instead.</summary>
     public int Resamples { get; init; } = 9999;
 
     /// <summary>Direction of the alternative.</summary>

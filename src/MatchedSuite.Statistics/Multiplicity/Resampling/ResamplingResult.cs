@@ -18,10 +18,10 @@ public sealed record ResamplingResult
     /// <summary>b of the single step: flips in which any endpoint reaches the observed; −1 where missing.</summary>
     public required IReadOnlyList<int> SingleStepExceedances { get; init; }
 
-    /// <summary>B, the flips beside the data as they are.</summary>
+    /// <summary>B, the flips or relabelings beside the data as they are.</summary>
     public required int Flips { get; init; }
 
-    /// <summary>True where the flips are all there are, so the p-values are exact.</summary>
+    /// <summary>True where these are all there are, so the p-values are exact.</summary>
     public required bool Exhaustive { get; init; }
 
     /// <summary>

@@ -8,7 +8,7 @@ internal sealed class ScaledEndpoints
     private readonly int[] _order;
 
     /// <summary>Reads every endpoint once.</summary>
-    public ScaledEndpoints(IDifferenceStore store, ResamplingOptions options, CancellationToken cancellation)
+    public ScaledEndpoints(IDifferenceStore store, ISignPatterns patterns, ResamplingOptions options, CancellationToken cancellation)
     {
         _store = store;
         Options = options;
@@ -17,7 +17,7 @@ internal sealed class ScaledEndpoints
         Parallel.For(0, _scales.Length, parallel, () => new double[store.Sets], (endpoint, _, differences) =>
         {
             store.Read(endpoint, 1, differences);
-            _scales[endpoint] = EndpointScale.Of(differences, options);
+            _scales[endpoint] = EndpointScale.Of(differences, options, patterns);
             return differences;
         }, _ => { });
         _order = [.. Enumerable.Range(0, _scales.Length).Where(endpoint => _scales[endpoint].IsTested)];

@@ -17,13 +17,13 @@ internal sealed class StepDownBlock
     private const int Half = Row / 2;
 
     private readonly Thresholds _thresholds;
-    private readonly CommonFlips _flips;
+    private readonly ISignPatterns _flips;
     private readonly FlipTables _tables;
     private readonly CacheAligned<double> _largest;
     private readonly int[] _laneCounts = new int[Row];
 
     /// <summary>Room for a block of at most <paramref name="capacity"/> flips.</summary>
-    public StepDownBlock(int sets, int capacity, CommonFlips flips, Thresholds thresholds)
+    public StepDownBlock(int sets, int capacity, ISignPatterns flips, Thresholds thresholds)
     {
         _thresholds = thresholds;
         _flips = flips;
