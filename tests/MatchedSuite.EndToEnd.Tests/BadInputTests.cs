@@ -59,7 +59,8 @@ public class BadInputTests
         ["a key of pairs"] = (f => f.Change("study.yaml", "  subject: person", "  subject: person\n  person-time: age"), ["'design.person-time' is not available in this version for this kind of design, only for 'pairs'"]),
         ["a rule for zeros"] = (f => f.Change("study.yaml", "adjust: [", "zeros: pratt, adjust: ["), ["'analysis.zeros'", "only for 'pairs'"]),
         ["a sign that is none"] = (f => { f.Change("study.yaml", "analysis: {continuous: [conditional-logistic, within-set-linear, aligned-rank, set-relabel]", "endpoints: {kind: binary}\nanalysis: {binary: [mantel-haenszel]"); }, ["panel.csv", "'crp'", "binary"]),
-        ["an adjustment by sign flips"] = (f => f.Change("study.yaml", "adjust: [bonferroni", "adjust: [max-t"), ["'max-t' flips whole sets, which no method for a design of kind 'sets' does", "holm"]),
+        ["an adjustment by sign flips"] = (f => f.Change("study.yaml", "adjust: [bonferroni", "adjust: [min-p"), ["'min-p' flips signs, and a design of kind 'sets' exchanges labels instead", "'max-t'"]),
+        ["relabelings beside covariates"] = (f => { f.Change("study.yaml", "adjust: [bonferroni", "adjust: [max-t"); f.Change("study.yaml", "  subject: person", "  subject: person\n  covariates: [smoking]"); }, ["'max-t' exchanges labels over values as they are", "design.covariates"]),
         ["a covariate that is not there"] = (f => f.Change("study.yaml", "  subject: person", "  subject: person\n  covariates: [weight]"), ["samples.csv", "'weight'"]),
         ["text in a column matched within"] = (f => { f.Change("study.yaml", "  subject: person", "  subject: person\n  match-on: [{column: age, within: 2}]"); f.Change("samples.csv", "east,42,", "east,old,"); }, ["samples.csv", "'old' is not a number"]),
     };

@@ -32,6 +32,15 @@ public sealed class CrossoverStudyTests : IDisposable
     public void Dispose() => _folder.Dispose();
 
     [Fact]
+    public void Adjustments_by_flips_are_refused()
+    {
+        _folder.Change("study.yaml", "output:", "analysis: {adjust: [max-t]}\noutput:");
+        Finished run = _folder.Run("check", "study.yaml");
+        Assert.Equal(2, run.ExitCode);
+        Assert.Contains("'max-t' flips whole sets, which no method for a design of kind 'crossover' does", run.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Treatment_period_and_carry_over_agree_with_base_R()
     {
         ResultsTable results = Analyse();

@@ -120,6 +120,23 @@ public class AdjustmentWorkedExamplesTests
         MethodPage.Of("max-t").Shows("critical t at 0.05", $"{maxT.CriticalValue}");
     }
 
+    [Fact]
+    public void Relabeling_page()
+    {
+        // The table of the page read as members of sets (1 to 4 with the case 4, 5 to 8 with the cases 6 and 8) and as subjects of two arms.
+        var values = new DifferenceTable(Enumerable.Range(1, 5).SelectMany(j => Expected.Table("westfall_young_8x5").Numbers($"e{j}")).ToArray(), 8);
+        var sets = RelabelMaxT.Run(values, new RelabelBlocks([0, 4, 8], [false, false, false, true, false, true, false, true]), new ResamplingOptions());
+        var arms = RelabelMaxT.Run(values, new RelabelBlocks([0, 8], [true, true, false, true, false, true, false, false]), new ResamplingOptions());
+        Assert.Equal((23, 69), (sets.Flips, arms.Flips));
+        for (int j = 0; j < 5; j++)
+        {
+            MethodPage.Of("max-t").Shows($"e{j + 1} of the sets", $"{sets.StepDown[j].Value}, {sets.SingleStep[j].Value}");
+            MethodPage.Of("max-t").Shows($"e{j + 1} of the arms", $"{arms.StepDown[j].Value}, {arms.SingleStep[j].Value}");
+        }
+
+        MethodPage.Of("max-t").Shows("critical score of the arms at 0.05", $"{arms.CriticalValue}");
+    }
+
     private static void ShowsEach(string name, double[] p, Probability[] adjusted)
     {
         for (int i = 0; i < p.Length; i++)

@@ -5,7 +5,7 @@ using MatchedSuite.Statistics.Multiplicity.Resampling;
 
 namespace MatchedSuite.Engine.Adjusting;
 
-/// <summary>Runs the adjustments by sign flips over one group of primary rows.</summary>
+/// <summary>Runs the adjustments by sign flips, or by relabelings, over one group of primary rows.</summary>
 internal sealed class FlipAdjuster(AnalysisPlan plan, HypothesisGroup group, int[] members, HypothesisTable table, AdjustedColumns columns)
 {
     /// <summary>Runs them.</summary>
@@ -20,13 +20,16 @@ internal sealed class FlipAdjuster(AnalysisPlan plan, HypothesisGroup group, int
             group.Rejected[adjustment] = 0;
             if (members.Length == 0)
                 continue;
-            ResamplingResult result = rule.Procedure(differences, Options(threads, memory), cancellation);
+            ResamplingOptions options = Options(threads, memory);
+            ResamplingResult result = section.Blocks is { } blocks
+                ? rule.OverLabels!(differences, blocks, options, cancellation)
+                : rule.Procedure(differences, options, cancellation);
             for (int i = 0; i < members.Length; i++)
                 columns.Set(adjustment, members[i], result.StepDown[i]);
             group.Rejected[adjustment] = result.StepDown.Count(p => p.IsAtMost(plan.LevelOf(rule)));
             group.Flips.Add(new FlipFacts(rule.Name, result.Flips, result.Exhaustive, result.CriticalValue));
             if (adjustment == firstFamilyWise)
-                MarkOutOfReach(result);
+                MarkOutOfReach(result, section.Blocks);
         }
     }
 
@@ -41,14 +44,16 @@ internal sealed class FlipAdjuster(AnalysisPlan plan, HypothesisGroup group, int
         PanelMemory = memory,
     };
 
-    // An adjusted p-value is neither below what the number of flips allows nor below the endpoint's own smallest p-value.
-    private void MarkOutOfReach(ResamplingResult result)
+    // An adjusted p-value is not below what the number of patterns allows; where all are listed, one that mirrors the data reaches it too.
+    // Of flips it is not below the endpoint's own smallest p-value either; labels are compared by a statistic that need not be the method's.
+    private void MarkOutOfReach(ResamplingResult result, RelabelBlocks? blocks)
     {
-        int unavoidable = result.Exhaustive && plan.Options.Sides == Sides.Two ? 2 : 1;
+        bool hasMirror = blocks?.IsBalanced ?? true;
+        int unavoidable = hasMirror && result.Exhaustive && plan.Options.Sides == Sides.Two ? 2 : 1;
         double smallest = unavoidable / (1.0 + result.Flips);
         foreach (int row in members)
         {
-            if (smallest > plan.Study.Analysis.Alpha || table.SmallestPossible[row] > plan.Study.Analysis.Alpha)
+            if (smallest > plan.Study.Analysis.Alpha || (blocks is null && table.SmallestPossible[row] > plan.Study.Analysis.Alpha))
                 columns.MarkOutOfReach(row);
         }
     }

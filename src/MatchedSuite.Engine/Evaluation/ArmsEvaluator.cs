@@ -17,21 +17,16 @@ internal sealed class ArmsEvaluator : EndpointEvaluator
     private readonly ArmsDesign _design;
     private readonly PairRows _pairs;
     private readonly StrataRows _between;
-    private readonly StrataSets[] _both;
     private readonly StrataSets[] _byArm;
 
     public ArmsEvaluator(AnalysisPlan plan, ArmsDesign design)
         : base(plan)
     {
         Arrangement arrangement = plan.Arrangement;
-        Place baseline = arrangement.Places[design.Baseline];
         _design = design;
         _pairs = new PairRows(plan, null, Scratch);
         _between = new StrataRows(arrangement.Strata.Length, plan.Options);
-        Func<int, bool>[] takePart = [.. design.Comparisons.Select<ArmComparison, Func<int, bool>>(comparison =>
-            set => baseline.Has(set) && arrangement.Places[comparison.FollowUp].Has(set))];
-        _both = [.. takePart.Select(has => StrataSets.Of(arrangement, has))];
-        _byArm = [.. takePart.Select(has => StrataSets.OfGroups(arrangement, has))];
+        _byArm = [.. design.Comparisons.Select(comparison => StrataSets.OfGroups(arrangement, subject => design.IsSeenAtBoth(subject, comparison, arrangement)))];
     }
 
     /// <inheritdoc/>
@@ -50,6 +45,8 @@ internal sealed class ArmsEvaluator : EndpointEvaluator
             int before = output.Rows.Count;
             int followUp = _design.Comparisons[comparison].FollowUp;
             AddBetweenArms(comparison, byVisit.Slice(followUp * subjects, subjects), baseline, endpoint, output);
+            if (Plan.Flips is { } flips)
+                KeepChanges(comparison, byVisit.Slice(followUp * subjects, subjects), baseline, flips, output);
             AddWithinArms(comparison, byVisit.Slice(followUp * subjects, subjects), baseline, endpoint, output);
             if (Plan.Study.Endpoints.PerStandardDeviation && endpoint.Kind == EndpointKind.Continuous)
                 StandardScale.Apply(baseline, output.Rows.Records[before..], Scratch);
@@ -59,7 +56,7 @@ internal sealed class ArmsEvaluator : EndpointEvaluator
     private void AddBetweenArms(int comparison, ReadOnlySpan<double> followUp, ReadOnlySpan<double> baseline, EndpointInfo endpoint, BlockOutput output)
     {
         int before = output.Rows.Count;
-        StrataSets strata = _both[comparison];
+        StrataSets strata = _design.SeenAtBoth[comparison];
         short contrast = _design.Comparisons[comparison].BetweenArms;
         foreach (PlannedArmMethod planned in _design.BetweenArms(endpoint.Kind))
         {
@@ -96,6 +93,20 @@ internal sealed class ArmsEvaluator : EndpointEvaluator
             row.Contrast = contrast;
             row.LogBase = (short)EstimateLogBase.Of(EstimateScale.Analysis, endpoint.Transform);
             row.Remarks |= unadjusted;
+        }
+    }
+
+    // Changes on the analysis scale, whose labels are the arms; a subject without a change stays missing.
+    private void KeepChanges(int comparison, ReadOnlySpan<double> followUp, ReadOnlySpan<double> baseline, FlipPlan flips, BlockOutput output)
+    {
+        StrataSets strata = _design.SeenAtBoth[comparison];
+        for (int position = 0; position < strata.Codes.Length; position++)
+        {
+            FlipSection section = flips.Section(_design.Comparisons[comparison].BetweenArms, strata.Codes[position])!;
+            ReadOnlySpan<int> designed = strata.SetsAt(position);
+            Span<double> kept = output.Differences.Row.Slice(section.Offset, section.Sets);
+            for (int i = 0; i < kept.Length; i++)
+                kept[i] = followUp[designed[i]] - baseline[designed[i]];
         }
     }
 

@@ -46,8 +46,22 @@ internal sealed class SetsEvaluator : EndpointEvaluator
 
         int before = output.Rows.Count;
         AddMethods(members, _design.MethodsFor(endpoint.Kind), scale, outcome, output);
+        if (Plan.Flips is { } flips)
+            KeepValues(members, flips, output);
         if (!above.IsEmpty)
             AddAboveBelow(above, before, output);
+    }
+
+    // What labels are exchanged over: every member's value, missing or not.
+    private void KeepValues(ReadOnlySpan<double> members, FlipPlan flips, BlockOutput output)
+    {
+        foreach (SetPart part in _design.Parts)
+        {
+            FlipSection section = flips.Section(0, part.Stratum)!;
+            Span<double> kept = output.Differences.Row.Slice(section.Offset, section.Sets);
+            for (int i = 0; i < kept.Length; i++)
+                kept[i] = members[part.Members[i]];
+        }
     }
 
     // One value a member: 1 where the measured value is at or above the limit.

@@ -19,7 +19,7 @@ public static class AdjustmentTable
         Plain("holm-sidak", FamilyWise, HolmSidak.Adjust) with { FirstStep = FirstStep.SidakShares },
         Plain("hochberg", FamilyWise, Hochberg.Adjust) with { FirstStep = FirstStep.EqualShares },
         Plain("hommel", FamilyWise, Hommel.Adjust) with { FirstStep = FirstStep.EqualShares },
-        new ResamplingAdjustment("max-t", MaxT.Run),
+        new ResamplingAdjustment("max-t", MaxT.Run) { OverLabels = RelabelMaxT.Run },
         new ResamplingAdjustment("min-p", MinP.Run),
         Plain("bh", FalseDiscovery, BenjaminiHochberg.Adjust) with
         {

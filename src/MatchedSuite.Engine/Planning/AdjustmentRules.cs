@@ -16,8 +16,8 @@ internal static class AdjustmentRules
         Adjustment[] asked = [.. study.Analysis.Adjust.Select(AdjustmentTable.Named)];
         foreach (Adjustment adjustment in asked)
         {
-            if (adjustment is ResamplingAdjustment)
-                RefuseUnflippable(study, catalogue, adjustment.Name);
+            if (adjustment is ResamplingAdjustment resampling)
+                RefuseUnlikeTheDesign(study, catalogue, resampling);
             if (adjustment is PValueAdjustment byP)
                 RefuseFamilyRule(study, byP);
         }
@@ -26,7 +26,7 @@ internal static class AdjustmentRules
             RefuseCoverage(study, asked);
     }
 
-    /// <summary>What flipped endpoints are compared by; null where no adjustment flips sets.</summary>
+    /// <summary>What flipped endpoints are compared by; null where no adjustment flips sets or exchanges labels.</summary>
     public static FlipStatistic? StatisticOf(StudyDefinition study, EndpointCatalogue catalogue)
     {
         if (!study.Analysis.Adjust.Any(name => AdjustmentTable.Named(name) is ResamplingAdjustment))
@@ -34,6 +34,33 @@ internal static class AdjustmentRules
         return PrimaryMethods(study, catalogue).All(of => DesignTable.Of(study).FlipOf(of.Method)?.Statistic == FlipStatistic.Score)
             ? FlipStatistic.Score
             : FlipStatistic.T;
+    }
+
+    private static void RefuseUnlikeTheDesign(StudyDefinition study, EndpointCatalogue catalogue, ResamplingAdjustment adjustment)
+    {
+        DesignEntry design = DesignTable.Of(study);
+        if (Enum.GetValues<EndpointKind>().SelectMany(design.MethodsFor).Any(design.Relabels))
+            RefuseUnrelabelable(study, adjustment);
+        else
+            RefuseUnflippable(study, catalogue, adjustment.Name);
+    }
+
+    // Labels are exchanged over values as they are. At arms no method is adjusted for covariates, and the results say so.
+    private static void RefuseUnrelabelable(StudyDefinition study, ResamplingAdjustment adjustment)
+    {
+        if (adjustment.OverLabels is null)
+        {
+            string[] able = [.. AdjustmentTable.All.OfType<ResamplingAdjustment>().Where(other => other.OverLabels is not null).Select(other => other.Name)];
+            throw Refusal(study, "analysis.adjust",
+                $"'{adjustment.Name}' flips signs, and a design of kind '{WrittenName.Of(study.Design.Kind)}' exchanges labels instead",
+                $"{Listing.Of(able)}, or an adjustment of p-values", $"Ask for {able[0]}, or for holm.");
+        }
+
+        if (study.Design.Kind == DesignKind.Sets && study.Design.Covariates.Count > 0)
+        {
+            throw Refusal(study, "analysis.adjust", $"'{adjustment.Name}' exchanges labels over values as they are, and design.covariates asks for adjusted results",
+                "a study without covariates, or adjustments of p-values alone", "Ask for holm, or another adjustment of p-values.");
+        }
     }
 
     private static void RefuseUnflippable(StudyDefinition study, EndpointCatalogue catalogue, string adjustment)

@@ -2,6 +2,7 @@ using MatchedSuite.Engine.Evaluation;
 using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Running;
 using MatchedSuite.Statistics.Arms;
+using MatchedSuite.Statistics.Multiplicity.Resampling;
 using MatchedSuite.Storage;
 using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Endpoints;
@@ -26,7 +27,9 @@ public sealed class ArmsDesign : IDesign
         Baseline = study.Design.Visit!.ReferencePosition;
         Comparisons = [.. FollowUps(study.Design).Select((visit, position) => Comparison(visit, position, inputs, arrangement))];
         Contrasts = ContrastNames(study.Design);
+        SeenAtBoth = [.. Comparisons.Select(comparison => StrataSets.Of(arrangement, subject => IsSeenAtBoth(subject, comparison, arrangement)))];
         Arms = [.. arrangement.GroupOfSet.Select(group => group == 0 ? Arm.Index : Arm.Reference)];
+        FlipSections = FlipPlan.SectionsOf([.. SeenAtBoth.SelectMany(strata => (StrataSets?[])[strata, null])], BlocksOf);
         StratumNames = [.. arrangement.Strata, study.Design.Arm!.Index, study.Design.Arm.Reference];
         _between = study.Analysis.Methods.ToDictionary(of => of.Key, of => Between(of.Value));
         _within = study.Analysis.Methods.ToDictionary(of => of.Key, of => Within(of.Key, of.Value));
@@ -43,6 +46,12 @@ public sealed class ArmsDesign : IDesign
 
     /// <inheritdoc/>
     public IReadOnlyList<string> StratumNames { get; }
+
+    /// <inheritdoc/>
+    public IReadOnlyList<FlipSection> FlipSections { get; }
+
+    /// <summary>Subjects with samples at both visits of each comparison, by stratum.</summary>
+    internal IReadOnlyList<StrataSets> SeenAtBoth { get; }
 
     /// <summary>Position of the reference visit.</summary>
     public int Baseline { get; }
@@ -76,6 +85,10 @@ public sealed class ArmsDesign : IDesign
         }
     }
 
+    /// <summary>Whether a subject has samples at both visits of a comparison.</summary>
+    internal bool IsSeenAtBoth(int subject, ArmComparison comparison, Arrangement arrangement) =>
+        arrangement.Places[Baseline].Has(subject) && arrangement.Places[comparison.FollowUp].Has(subject);
+
     /// <summary>The methods that compare arms, the primary one first.</summary>
     public ReadOnlySpan<PlannedArmMethod> BetweenArms(EndpointKind kind) => _between[kind];
 
@@ -106,6 +119,9 @@ public sealed class ArmsDesign : IDesign
         string[] described = named.Length > 0 ? named : [.. KnownNames.UsualMethods(DesignKind.Pairs, kind).Take(1)];
         return [.. described.Select(name => new PlannedMethod(_codes.CodeOf(name), PairMethodTable.Named(name), IsPrimary: false))];
     }
+
+    // Any subject may have been in either arm.
+    private RelabelBlocks BlocksOf(int[] subjects) => new([0, subjects.Length], Array.ConvertAll(subjects, subject => Arms[subject] == Arm.Index));
 
     private static string Quoted(IEnumerable<string> names) => string.Join(", ", names.Select(name => $"'{name}'"));
 }

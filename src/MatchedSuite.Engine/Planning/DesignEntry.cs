@@ -14,6 +14,9 @@ public sealed record DesignEntry(
     /// <summary>How a method takes part in adjustments by sign flips; null where it cannot.</summary>
     public Func<string, FlipRule?> FlipOf { get; init; } = _ => null;
 
+    /// <summary>Whether a method can be the primary one where adjustments exchange labels: sets whose members do, or subjects of two arms.</summary>
+    public Func<string, bool> Relabels { get; init; } = _ => false;
+
     /// <summary>Optional keys of the study file that have an effect in this kind of design beside those of every kind.</summary>
     public IReadOnlyList<string> Keys { get; init; } = [];
 

@@ -18,6 +18,7 @@ public static class DesignTable
         },
         new(DesignKind.Sets, inputs => new SetsDesign(inputs), SetMethodTable.NamesFor)
         {
+            Relabels = _ => true,
             Keys = ["design.reuse"],
             Intervals = [IntervalKind.Profile],
         },
@@ -29,6 +30,7 @@ public static class DesignTable
         },
         new(DesignKind.ChangeByArm, inputs => new ArmsDesign(inputs), ArmMethodTable.NamesFor)
         {
+            Relabels = name => ArmMethodTable.Named(name) is not null,
             Keys = ["design.visit.window", "design.person-time", "analysis.zeros"],
         },
         new(DesignKind.Crossover, inputs => new CrossoverDesign(inputs), CrossoverMethodTable.NamesFor),

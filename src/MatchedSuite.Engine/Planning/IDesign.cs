@@ -14,7 +14,7 @@ public interface IDesign
     /// <summary>What looks odd once the design is laid out, one sentence each.</summary>
     IReadOnlyList<string> Warnings => [];
 
-    /// <summary>The values that evaluators keep of each endpoint when sets are flipped, one part a contrast and stratum; none where they keep none.</summary>
+    /// <summary>The values that evaluators keep of each endpoint when sets are flipped or labels exchanged, one part a contrast and stratum; none where they keep none.</summary>
     IReadOnlyList<FlipSection> FlipSections => [];
 
     /// <summary>Names of the strata and groups that rows name by position, where they are others than the arrangement's strata; else empty.</summary>

@@ -3,6 +3,7 @@ using MatchedSuite.Engine.Methods;
 using MatchedSuite.Engine.Rows;
 using MatchedSuite.Engine.Running;
 using MatchedSuite.Statistics;
+using MatchedSuite.Statistics.Multiplicity.Resampling;
 using MatchedSuite.Statistics.Sets;
 using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Matching;
@@ -42,6 +43,7 @@ public sealed class SetsDesign : IDesign
         if (inputs.Catalogue.HasDetectionLimits)
             _aboveBelow = [Planned(AboveBelowMethod, 1, EndpointKind.Binary, study.Analysis)];
         Warnings = CollinearWarnings(covariates);
+        FlipSections = SectionsOf(_parts);
     }
 
     /// <summary>Who stands in which set and role.</summary>
@@ -61,6 +63,9 @@ public sealed class SetsDesign : IDesign
 
     /// <inheritdoc/>
     public IReadOnlyList<string> Warnings { get; }
+
+    /// <inheritdoc/>
+    public IReadOnlyList<FlipSection> FlipSections { get; }
 
     /// <summary>The methods for a kind of endpoint, the primary one first.</summary>
     public ReadOnlySpan<PlannedSetMethod> MethodsFor(EndpointKind kind) => _methods[kind];
@@ -99,6 +104,19 @@ public sealed class SetsDesign : IDesign
         return new SetPart(
             stratum, members, starts, [.. members.Select(member => Layout.IsIndex[member])],
             [.. columns.SelectMany(column => members.Select(member => column[member]))]);
+    }
+
+    private static List<FlipSection> SectionsOf(SetPart[] parts)
+    {
+        var sections = new List<FlipSection>();
+        int offset = 0;
+        foreach (SetPart part in parts)
+        {
+            sections.Add(new FlipSection(0, part.Stratum, offset, part.Members.Length) { Blocks = new RelabelBlocks(part.Starts, part.IsIndex) });
+            offset += part.Members.Length;
+        }
+
+        return sections;
     }
 
     private string[] CollinearWarnings(IReadOnlyList<Covariate> covariates)

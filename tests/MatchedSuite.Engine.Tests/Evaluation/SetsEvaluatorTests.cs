@@ -36,6 +36,25 @@ public sealed class SetsEvaluatorTests : IDisposable
         Assert.Equal(3 * 10, output.Details.Records.ToArray().Count(detail => detail.Method == 0)); // all sets and two strata
     }
 
+    [Fact]
+    public void Values_of_all_members_are_kept_for_all_sets_and_each_stratum_where_labels_are_exchanged()
+    {
+        using StudyInputs inputs = Open("  stratum: town\n", "max-t");
+        var plan = new AnalysisPlan(inputs);
+        var output = new BlockOutput();
+        double[] values = Values(plan);
+        plan.NewEvaluator().Evaluate([.. values], new EndpointInfo { Name = "a", Kind = EndpointKind.Ordinal }, 0, output);
+        var members = new double[plan.Arrangement.Members!.Count];
+        plan.Arrangement.Members.Values.Gather(values, members);
+        FlipSection[] sections = [.. plan.Flips!.Sections];
+        Assert.Equal(members, output.Differences.Row[..sections[1].Offset].ToArray());
+        Assert.Equal([Sets, Sets / 2, Sets / 2], sections.Select(section => section.Blocks!.Count));
+        Assert.Equal(members.Length, sections[1].Sets + sections[2].Sets);
+        Assert.All(sections, section => Assert.Equal(section.Sets, section.Blocks!.Members));
+        Assert.All(sections[0].Blocks!.IndexCounts.ToArray(), cases => Assert.Equal(1, cases));
+        Assert.Equal(members.Order(), output.Differences.Row[sections[1].Offset..].ToArray().Order());
+    }
+
     [Theory]
     [InlineData("", "continuous")]
     [InlineData("  covariates: [smoking]\n", "continuous")]
@@ -77,7 +96,7 @@ public sealed class SetsEvaluatorTests : IDisposable
     }
 
     // Every kind of number that a run can put beside a row is asked for.
-    private StudyInputs Open(string design)
+    private StudyInputs Open(string design, string adjustments = "holm")
     {
         var sheet = new System.Text.StringBuilder("sample,set,role,town,smoking\n");
         for (int set = 0; set < Sets; set++)
@@ -103,7 +122,7 @@ public sealed class SetsEvaluatorTests : IDisposable
               role: {column: role, index: case, reference: control}
             {{design}}
             endpoints: {dictionary: markers.csv, scale: sd}
-            analysis: {continuous: [conditional-logistic, within-set-linear, aligned-rank, set-relabel], resamples: 99, intervals: [profile]}
+            analysis: {continuous: [conditional-logistic, within-set-linear, aligned-rank, set-relabel], resamples: 99, intervals: [profile], adjust: [{{adjustments}}]}
             """);
         return StudyInputs.Open(StudyReader.Read(path, Available.InThisVersion), new RunOptions { Threads = 1 }, _folder);
     }
