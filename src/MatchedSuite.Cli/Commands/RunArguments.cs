@@ -12,6 +12,7 @@ internal sealed class RunArguments
     private readonly Option<long?> _threads = NumberArguments.Whole("--threads", "threads to use; default: all cores", "N", least: 1);
     private readonly Option<long?> _seed = NumberArguments.Whole("--seed", "seed, instead of the study file's", "N", least: long.MinValue);
     private readonly Option<long?> _memory = NumberArguments.Size("--memory", "upper bound for the values held in memory; default: 1GiB", LeastMemory);
+    private readonly Option<bool> _noReport = new("--no-report") { Description = "write no report, whatever the study file says" };
     private readonly Option<bool> _strict = new("--strict") { Description = "warnings become refusals" };
 
     /// <summary>Gives the study argument and all options to a command.</summary>
@@ -23,6 +24,7 @@ internal sealed class RunArguments
         command.Add(_seed);
         command.Add(_memory);
         command.Add(_strict);
+        command.Add(_noReport);
     }
 
     /// <summary>The study file's path as typed.</summary>
@@ -38,6 +40,7 @@ internal sealed class RunArguments
             Threads = (int)Math.Min(parsed.GetValue(_threads) ?? usual.Threads, 1024),
             Seed = parsed.GetValue(_seed),
             Memory = parsed.GetValue(_memory) ?? usual.Memory,
+            Report = parsed.GetValue(_noReport) ? false : null,
             Warnings = parsed.GetValue(_strict) ? WarningRule.Refuse : WarningRule.Report,
         };
     }

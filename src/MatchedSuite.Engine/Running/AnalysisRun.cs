@@ -57,6 +57,8 @@ public sealed class AnalysisRun
     private FinishedRun Execute(AuditPageWriter auditPage, PageWriter pages, CancellationToken cancellation)
     {
         Task<IReadOnlyList<InputRecord>> fingerprints = Task.Run(() => InputRecord.OfAll(_study, cancellation), cancellation);
+        if (_study.Output.Report == true)
+            _observer.Note("output.report: this version writes no report.html; summary.md is what a person reads first");
         _observer.Step($"reading {_study.Data.Samples}");
         using StudyInputs inputs = StudyInputs.Open(_study, _options, _folder.Partial);
         Warn(inputs.Audit.Warnings.Select(warning => warning.Text));

@@ -27,6 +27,9 @@ public sealed record RunOptions
     /// <summary>What a warning does.</summary>
     public WarningRule Warnings { get; init; } = WarningRule.Report;
 
+    /// <summary>Whether a report is asked for, instead of the study file's word; null keeps that.</summary>
+    public bool? Report { get; init; }
+
     /// <summary>Endpoints of one block; null lets the engine choose by memory. Results do not depend on it.</summary>
     public int? EndpointsPerBlock { get; init; }
 
@@ -39,7 +42,11 @@ public sealed record RunOptions
         return study with
         {
             Seed = Seed ?? study.Seed,
-            Output = Folder is null ? study.Output : study.Output with { Folder = Path.GetFullPath(Folder) },
+            Output = study.Output with
+            {
+                Folder = Folder is null ? study.Output.Folder : Path.GetFullPath(Folder),
+                Report = Report ?? study.Output.Report,
+            },
         };
     }
 

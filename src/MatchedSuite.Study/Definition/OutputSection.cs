@@ -9,8 +9,8 @@ public sealed record OutputSection
     /// <summary>True where an earlier run in the folder may be replaced.</summary>
     public bool Replace { get; init; } = true;
 
-    /// <summary>True where a report is written.</summary>
-    public bool Report { get; init; } = true;
+    /// <summary>Whether a report is asked for; null where the study file does not say.</summary>
+    public bool? Report { get; init; }
 
     /// <summary>Rows in the printed summary and the report's first table.</summary>
     public int Top { get; init; } = 25;

@@ -32,7 +32,7 @@ public class StudyReaderTests
         Assert.Equal((0.05, Tolerance.Drop, 0.5), (study.Gates.UnmatchedAtMost, study.Gates.Tolerance, study.Gates.MissingAtMost));
         OutputSection output = study.Output;
         Assert.Equal(Path.Combine(folder.Path, "results"), output.Folder);
-        Assert.Equal((false, false, 10, true), (output.Replace, output.Report, output.Top, output.IdentifiersShown));
+        Assert.Equal((false, (bool?)false, 10, true), (output.Replace, output.Report, output.Top, output.IdentifiersShown));
     }
 
     [Fact]
@@ -80,7 +80,7 @@ public class StudyReaderTests
         Assert.Equal(["holm", "bh"], study.Analysis.Adjust);
         Assert.Equal((0.95, 0.05, 0.05, 9999, 3), (study.Analysis.Confidence, study.Analysis.Alpha, study.Analysis.Fdr, study.Analysis.Resamples, study.Analysis.MinimumSets));
         Assert.Equal("out", Path.GetFileName(study.Output.Folder));
-        Assert.Equal((true, true, 25, false), (study.Output.Replace, study.Output.Report, study.Output.Top, study.Output.IdentifiersShown));
+        Assert.Equal((true, (bool?)null, 25, false), (study.Output.Replace, study.Output.Report, study.Output.Top, study.Output.IdentifiersShown));
     }
 
     [Theory]

@@ -31,7 +31,7 @@ internal static class OutputReading
         return output with
         {
             Replace = section.Named("overwrite", ["replace", "refuse"]) != "refuse",
-            Report = section.IsTrue("report") ?? output.Report,
+            Report = section.IsTrue("report"),
             Top = (int)(section.Whole("top", 1, 100_000) ?? output.Top),
             IdentifiersShown = section.Named("identifiers", ["hidden", "shown"]) == "shown",
         };
