@@ -1,4 +1,5 @@
 using System.Globalization;
+using System.Text;
 using System.Text.Json;
 using MatchedSuite.EndToEnd.Tests.Program;
 
@@ -63,6 +64,51 @@ public class RelabelTests
         JsonElement resampling = JsonDocument.Parse(folder.Read("results/run.json")).RootElement.GetProperty("hypotheses")[0].GetProperty("resampling").GetProperty("max-t");
         Assert.False(resampling.GetProperty("all_flips").GetBoolean());
         HasTheSameBytes(folder);
+    }
+
+    [Fact]
+    public void Values_that_do_not_fit_into_memory_change_no_byte()
+    {
+        // 24,000 endpoints of 96 members are 18 MB, more than a quarter of the smallest memory.
+        const int Members = 96;
+        using var folder = new StudyFolder();
+        folder.Write("study.yaml", SmallSets.Study.Replace("  subject: person\n", "", StringComparison.Ordinal)
+            .Replace("[conditional-logistic, within-set-linear, aligned-rank, set-relabel], adjust: [bonferroni, holm, bh]", "[within-set-linear], adjust: [max-t], resamples: 99", StringComparison.Ordinal));
+        folder.Write("samples.csv", "sample,risk_set,status\n" + string.Concat(Enumerable.Range(0, Members).Select(i => $"s{i},r{i / 4},{(i % 4 == 0 ? "case" : "control")}\n")));
+        var panel = new StringBuilder("marker," + string.Join(',', Enumerable.Range(0, Members).Select(i => $"s{i}")) + "\n");
+        uint state = 12345;
+        for (int endpoint = 0; endpoint < 24_000; endpoint++)
+        {
+            panel.Append(CultureInfo.InvariantCulture, $"e{endpoint}");
+            for (int member = 0; member < Members; member++)
+            {
+                state = (state * 1664525) + 1013904223;
+                panel.Append(',').Append(state % 97 == 0 ? "NA" : ((state >> 16) % 1000).ToString(CultureInfo.InvariantCulture));
+            }
+
+            panel.Append('\n');
+        }
+
+        folder.Write("panel.csv", panel.ToString());
+        Finished run = folder.Run("analyze", "study.yaml", "--threads", "2");
+        Assert.True(run.ExitCode == 0, run.Error);
+        Assert.NotEqual("", folder.Results().Text("e23999", "within-set-linear", "p_max_t"));
+        HasTheSameBytes(folder);
+    }
+
+    [Theory]
+    [InlineData(1, 3, false)] // three sets of 1:2: one labelling of 27 may reach alone
+    [InlineData(0, 4, true)] // four sets of 1:1: two of 16 always reach together
+    public void Endpoints_that_the_labellings_cannot_find_are_flagged(int shape, int sets, bool outOfReach)
+    {
+        using StudyFolder folder = SmallSets.Folder();
+        string[] used = [.. Enumerable.Range(1, 12).Where(set => set % 3 == shape).Take(sets).Select(set => $",r{set},")];
+        folder.Write("samples.csv", string.Join('\n', SmallSets.Samples.Split('\n').Select((line, i) =>
+            i == 0 || used.Any(line.Contains) ? line : line.Replace(",case,", ",none,", StringComparison.Ordinal).Replace(",control,", ",none,", StringComparison.Ordinal))));
+        folder.Change("study.yaml", "[conditional-logistic, within-set-linear, aligned-rank, set-relabel], adjust: [bonferroni, holm, bh]", "[within-set-linear], adjust: [max-t]");
+        Finished run = folder.Run("analyze", "study.yaml");
+        Assert.True(run.ExitCode == 0, run.Error);
+        Assert.Equal(outOfReach, folder.Results().Text("crp", "within-set-linear", "flags").Contains("out-of-reach", StringComparison.Ordinal));
     }
 
     [Fact]
