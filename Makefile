@@ -32,8 +32,9 @@ demo: $(MATCHED) ## writes and analyses the invented demo study; results in arti
 test: $(MATCHED) ## every test: units, values from outside, the built executable
 	$(DOTNET) test $(SOLUTION) -c $(CONFIGURATION) -v quiet --logger 'console;verbosity=minimal'
 
-bench: $(MATCHED) ## ratios against short scripts on general-purpose libraries, then the hot paths
+bench: $(MATCHED) ## ratios against short scripts on general-purpose libraries, error rates over many studies, the hot paths
 	tests/MatchedSuite.Benchmarks/compare.sh $(MATCHED)
+	CALIBRATION_STUDIES=20000 $(DOTNET) test tests/MatchedSuite.Statistics.Tests -c $(CONFIGURATION) -v quiet --filter FullyQualifiedName~CalibrationTests
 	$(DOTNET) run --project tests/MatchedSuite.Benchmarks -c $(CONFIGURATION) -- --filter '*'
 
 clean: ## removes what was built

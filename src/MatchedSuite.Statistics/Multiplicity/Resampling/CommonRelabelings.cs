@@ -5,8 +5,8 @@ namespace MatchedSuite.Statistics.Multiplicity.Resampling;
 /// <summary>Other labellings of the members within their blocks, as changes of sign of <see cref="LabelledValues"/>.</summary>
 /// <remarks>
 /// Every labelling keeps the number of index members of each block. The members of the label that fewer have are chosen: random ones
-/// block after block by Floyd's algorithm, each from a random number of its own, so a block's part depends on seed, resample and
-/// block alone; listed ones by their place in colexicographic order.
+/// block after block by Floyd's algorithm, each from a random number of its own, so a block's part depends on seed, resample
+/// and the blocks up to it; listed ones by their place in colexicographic order.
 /// Source: Bentley and Floyd (1987), Communications of the ACM 30(9), 754-757.
 /// </remarks>
 internal sealed class CommonRelabelings : ISignPatterns
