@@ -5,10 +5,10 @@ namespace MatchedSuite.Statistics.Tests.Multiplicity.Resampling;
 /// <summary>Max-T as its definition reads, in double precision, one flip and one endpoint at a time: the twin of the fast one.</summary>
 internal static class PlainMaxT
 {
+    // Ties are ties of the correlation that t stands for where all sets are there, as the documents say: within 1e-9 of it, and 1e-12
+    // for what rounding leaves of a sum of zero.
     private const double TieTolerance = 1e-9;
-
-    // What rounding can leave of a sum of zero, in units of t.
-    private const double ZeroTolerance = 1e-11;
+    private const double ZeroTolerance = 1e-12;
 
     public static (int[] StepDown, int[] SingleStep, double Critical) Counts(double[] differences, int sets, ResamplingOptions options)
     {
@@ -46,10 +46,14 @@ internal static class PlainMaxT
             stepDown[order[place]] = Math.Max(stepDown[order[place]], stepDown[order[place + 1]]);
         maxima.Sort();
         int allowed = (int)Math.Floor(options.Level * (flips.Count + 1) + 1e-9) - 1;
-        return (stepDown, singleStep, allowed < 0 || order.Length == 0 ? double.PositiveInfinity : maxima[^(allowed + 1)]);
+        return (stepDown, singleStep, allowed < 0 || order.Length == 0 ? double.PositiveInfinity : Back(maxima[^(allowed + 1)], sets, options));
     }
 
-    // t, with an infinite one where nothing varies; NaN where there is nothing to flip.
+    private static double Back(double correlation, int sets, ResamplingOptions options) => options.Statistic == FlipStatistic.Score
+        ? correlation
+        : Math.Abs(correlation) < 1 ? Math.Sqrt(sets - 1) * correlation / Math.Sqrt(1 - (correlation * correlation)) : correlation / 0.0;
+
+    // The correlation that t stands for, 1 where nothing varies; scores are their own. NaN where there is nothing to flip.
     private static double[] Statistics(double[] differences, int sets, ulong[] flip, ResamplingOptions options)
     {
         var statistics = new double[differences.Length / sets];
@@ -71,12 +75,14 @@ internal static class PlainMaxT
             double t = options.Statistic == FlipStatistic.Score
                 ? directed / Math.Sqrt(squares)
                 : n < 2 ? double.NaN : directed / Math.Sqrt(n * Math.Max(0, squares - sum * sum / n) / (n - 1));
-            statistics[j] = squares == 0 ? double.NaN : options.Sides == Sides.Two ? Math.Abs(t) : t;
+            double correlation = options.Statistic == FlipStatistic.Score ? t
+                : double.IsInfinity(t) ? Math.Sign(t) : t / Math.Sqrt(sets - 1 + (t * t));
+            statistics[j] = squares == 0 ? double.NaN : options.Sides == Sides.Two ? Math.Abs(correlation) : correlation;
         }
 
         return statistics;
     }
 
     private static bool Reaches(double statistic, double observed) =>
-        statistic >= observed - TieTolerance * Math.Abs(observed) - ZeroTolerance || statistic.Equals(observed);
+        statistic >= observed - TieTolerance * Math.Abs(observed) - ZeroTolerance;
 }
