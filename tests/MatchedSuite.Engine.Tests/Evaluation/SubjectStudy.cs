@@ -6,6 +6,7 @@ using MatchedSuite.Engine.Rows;
 using MatchedSuite.Engine.Running;
 using MatchedSuite.Study.Definition;
 using MatchedSuite.Study.Endpoints;
+using MatchedSuite.Tests;
 
 namespace MatchedSuite.Engine.Tests.Evaluation;
 
@@ -79,13 +80,9 @@ internal sealed class SubjectStudy : IDisposable
         double[] measured = Values(endpoint.Kind);
         double[] values = new double[measured.Length];
         var output = new BlockOutput();
-        for (int warm = 0; warm < 3; warm++)
-            Once();
-        long before = GC.GetAllocatedBytesForCurrentThread();
-        Once();
-        long after = GC.GetAllocatedBytesForCurrentThread();
+        long allocated = Allocated.Least(Once);
         Assert.All(output.Rows.Records.ToArray().Where(row => row.Stratum == ResultRow.AllStrata), row => Assert.True(row.IsTested));
-        return after - before;
+        return allocated;
 
         void Once()
         {
