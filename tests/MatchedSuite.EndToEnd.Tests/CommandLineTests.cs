@@ -63,6 +63,16 @@ public class CommandLineTests
     }
 
     [Fact]
+    public void Counts_and_cautions_are_said_beside_the_table()
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        Finished run = folder.Run("analyze", "study.yaml");
+        Assert.Contains("8 sets (16 of 16 samples), 4 endpoints, 4 tested, 0 not", run.Error, StringComparison.Ordinal);
+        Assert.Contains("holm finds ", run.Error, StringComparison.Ordinal);
+        Assert.Contains("caution: A screen is not a diagnosis", run.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Quiet_says_nothing_and_still_writes()
     {
         using StudyFolder folder = StudyFolder.Small();

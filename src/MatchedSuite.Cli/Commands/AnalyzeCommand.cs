@@ -25,6 +25,10 @@ internal static class AnalyzeCommand
         if (voice.IsQuiet)
             return ExitCode.Done;
         voice.Result(SummaryTable.Text(run));
+        foreach (string sentence in RunSentences.Of(run))
+            voice.Note(sentence);
+        foreach (string caution in run.Cautions)
+            voice.Note($"caution: {caution}");
         voice.Note($"results in {run.Folder}");
         return ExitCode.Done;
     }
