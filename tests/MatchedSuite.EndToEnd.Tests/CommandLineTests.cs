@@ -63,6 +63,30 @@ public class CommandLineTests
     }
 
     [Fact]
+    public void On_a_terminal_a_bar_shows_how_far_the_run_is_and_goes_away()
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        string[] lines = SmallStudy.Panel.Split('\n');
+        string values = lines[1][lines[1].IndexOf(',', StringComparison.Ordinal)..];
+        folder.Write("panel.csv", lines[0] + "\n" + string.Concat(Enumerable.Range(0, 60_000).Select(endpoint => $"m{endpoint}{values}\n")));
+
+        // script(1) of util-linux gives the program a terminal and writes what it shows to a file.
+        using var process = System.Diagnostics.Process.Start(new System.Diagnostics.ProcessStartInfo(
+            "script", ["-qec", $"{MatchedProgram.Executable} analyze study.yaml", "shown.txt"])
+        {
+            WorkingDirectory = folder.Path, RedirectStandardInput = true, RedirectStandardOutput = true, Environment = { ["TERM"] = "xterm-256color" },
+        })!;
+        process.StandardInput.Close();
+        process.StandardOutput.ReadToEnd();
+        Assert.True(process.WaitForExit(TimeSpan.FromMinutes(1)));
+        string shown = folder.Read("shown.txt");
+        Assert.True(process.ExitCode == 0, shown);
+        Assert.Contains(" endpoints", shown, StringComparison.Ordinal);
+        Assert.Contains("%", shown, StringComparison.Ordinal);
+        Assert.Contains("results in", shown, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Counts_and_cautions_are_said_beside_the_table()
     {
         using StudyFolder folder = StudyFolder.Small();

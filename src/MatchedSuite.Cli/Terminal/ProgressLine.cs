@@ -7,7 +7,7 @@ internal sealed class ProgressLine : IDisposable
 {
     private readonly ManualResetEventSlim _over = new();
     private readonly Thread _painter;
-    private volatile Shown _shown = new(0, "");
+    private volatile Shown _shown = new(0, "reading");
 
     /// <summary>Starts to paint the bar.</summary>
     public ProgressLine(bool colours)
