@@ -25,15 +25,32 @@ public class SameBytesTests
         }
     }
 
-    [Fact]
-    public void The_program_compiled_ahead_and_the_program_on_the_runtime_write_the_same_bytes()
+    [Theory]
+    [InlineData("pairs", null)]
+    [InlineData("sets", "EnableAVX512")]
+    [InlineData("visits", "EnableAVX2")]
+    [InlineData("pairs", "EnableHWIntrinsic")]
+    public void Machine_code_and_the_runtime_with_any_vector_width_write_the_same_bytes(string design, string? switchedOff)
     {
         using var folder = new StudyFolder();
-        Assert.Equal(0, folder.Run("demo", "--out", "demo", "--quiet").ExitCode);
-        Finished run = MatchedProgram.RunOnRuntime(folder.Path, "analyze", "demo/study.yaml", "--quiet", "--out", "again");
+        Assert.Equal(0, folder.Run("demo", "--design", design, "--out", "demo", "--quiet").ExitCode);
+        Finished run = MatchedProgram.RunOnRuntime(folder.Path, switchedOff, "analyze", "demo/study.yaml", "--quiet", "--out", "again");
         Assert.True(run.ExitCode == 0, run.Error);
         foreach (string file in Written)
             Assert.True(File.ReadAllBytes(folder.At($"demo/results/{file}")).SequenceEqual(File.ReadAllBytes(folder.At($"again/{file}"))), file);
+    }
+
+    [Theory]
+    [InlineData("EnableAVX512")]
+    [InlineData("EnableHWIntrinsic")]
+    public void Common_sign_flips_count_the_same_with_any_vector_width(string switchedOff)
+    {
+        using StudyFolder folder = StudyFolder.Small();
+        folder.Change("study.yaml", "adjust: [bonferroni, holm, bh]", "resamples: 99, adjust: [max-t, min-p]");
+        Assert.Equal(0, folder.Run("analyze", "study.yaml", "--quiet").ExitCode);
+        Finished run = MatchedProgram.RunOnRuntime(folder.Path, switchedOff, "analyze", "study.yaml", "--quiet", "--out", "again");
+        Assert.True(run.ExitCode == 0, run.Error);
+        Assert.Equal(folder.Read("results/results.csv"), folder.Read("again/results.csv"));
     }
 
     [Fact]

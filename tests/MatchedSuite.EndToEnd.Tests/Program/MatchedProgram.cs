@@ -18,9 +18,15 @@ internal static class MatchedProgram
     }
 
     /// <summary>Runs the same program on the .NET runtime, compiled while it runs, in a folder and waits for its end.</summary>
-    public static Finished RunOnRuntime(string folder, params string[] arguments)
+    /// <param name="folder">Where it runs.</param>
+    /// <param name="setting">A setting of the runtime to switch off, such as <c>EnableAVX2</c>; null for none.</param>
+    /// <param name="arguments">The command line.</param>
+    public static Finished RunOnRuntime(string folder, string? setting, params string[] arguments)
     {
-        using Process process = StartProcess("dotnet", folder, ["exec", Path.Combine(AppContext.BaseDirectory, "matched.dll"), .. arguments]);
+        var start = StartOf("dotnet", folder, ["exec", Path.Combine(AppContext.BaseDirectory, "matched.dll"), .. arguments]);
+        if (setting is not null)
+            start.Environment[$"DOTNET_{setting}"] = "0";
+        using Process process = Process.Start(start)!;
         return WaitFor(process, arguments);
     }
 
@@ -41,19 +47,15 @@ internal static class MatchedProgram
     public static Process Start(string folder, params string[] arguments)
     {
         Assert.True(File.Exists(Executable), $"{Executable} is not there; run 'make build' first.");
-        return StartProcess(Executable, folder, arguments);
+        return Process.Start(StartOf(Executable, folder, arguments))!;
     }
 
-    private static Process StartProcess(string program, string folder, string[] arguments)
+    private static ProcessStartInfo StartOf(string program, string folder, string[] arguments) => new(program, arguments)
     {
-        var start = new ProcessStartInfo(program, arguments)
-        {
-            WorkingDirectory = folder,
-            RedirectStandardOutput = true,
-            RedirectStandardError = true,
-        };
-        return Process.Start(start)!;
-    }
+        WorkingDirectory = folder,
+        RedirectStandardOutput = true,
+        RedirectStandardError = true,
+    };
 
     private static string RepositoryRoot()
     {
