@@ -1,5 +1,3 @@
-using MatchedSuite.Statistics.Distributions;
-
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>Bowker's test of symmetry: do pairs move from one category to another as often as back?</summary>
@@ -43,16 +41,6 @@ public static class Bowker
             }
         }
 
-        if (df == 0)
-            return TestResult.Untested(Outcome.NothingDiffers, n, 2 * n);
-        return new TestResult
-        {
-            Sets = n,
-            Samples = 2 * n,
-            Statistic = statistic,
-            DegreesOfFreedom = df,
-            P = ChiSquared.UpperTail(statistic, df),
-            Remarks = options.Sides == Sides.Two ? Remarks.None : Remarks.TwoSidedOnly,
-        };
+        return SquareTable.ResultOf(statistic, df, n, options);
     }
 }

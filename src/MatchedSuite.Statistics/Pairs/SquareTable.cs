@@ -1,3 +1,5 @@
+using MatchedSuite.Statistics.Distributions;
+
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>The k × k table of an ordinal endpoint on pairs: index category by reference category.</summary>
@@ -22,6 +24,19 @@ internal readonly ref struct SquareTable
 
     /// <summary>Pairs with this category in the index role and that one in the reference role; categories in ascending order of their codes.</summary>
     public int this[int index, int reference] => _counts[(index * Categories) + reference];
+
+    /// <summary>The result of a chi-squared statistic on such a table, which has no direction; without degrees of freedom nothing differs.</summary>
+    public static TestResult ResultOf(double statistic, int degreesOfFreedom, int pairs, TestOptions options) => degreesOfFreedom == 0
+        ? TestResult.Untested(Outcome.NothingDiffers, pairs, 2 * pairs)
+        : new TestResult
+        {
+            Sets = pairs,
+            Samples = 2 * pairs,
+            Statistic = statistic,
+            DegreesOfFreedom = degreesOfFreedom,
+            P = ChiSquared.UpperTail(statistic, degreesOfFreedom),
+            Remarks = options.Sides == Sides.Two ? Remarks.None : Remarks.TwoSidedOnly,
+        };
 
     /// <summary>Counts the pairs of an endpoint.</summary>
     /// <param name="pairs">At least one pair.</param>

@@ -1,5 +1,3 @@
-using MatchedSuite.Statistics.Distributions;
-
 namespace MatchedSuite.Statistics.Pairs;
 
 /// <summary>Stuart–Maxwell test of marginal homogeneity: is every category as frequent in the index role as in the reference role?</summary>
@@ -45,17 +43,7 @@ public static class StuartMaxwell
         }
 
         var (statistic, rank) = QuadraticForm(covariance, differences);
-        if (rank == 0)
-            return TestResult.Untested(Outcome.NothingDiffers, n, 2 * n);
-        return new TestResult
-        {
-            Sets = n,
-            Samples = 2 * n,
-            Statistic = statistic,
-            DegreesOfFreedom = rank,
-            P = ChiSquared.UpperTail(statistic, rank),
-            Remarks = options.Sides == Sides.Two ? Remarks.None : Remarks.TwoSidedOnly,
-        };
+        return SquareTable.ResultOf(statistic, rank, n, options);
     }
 
     // Elimination in place; the last category of each group that hangs together has no pivot left, and no difference either.
