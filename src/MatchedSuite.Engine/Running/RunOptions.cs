@@ -50,19 +50,13 @@ public sealed record RunOptions
         };
     }
 
-    // The folder is replaced as a whole: with an input inside, a run would delete it.
     private static void RefuseFolderOfInputs(string folder, StudyDefinition study)
     {
-        string prefix = Path.TrimEndingDirectorySeparator(folder) + Path.DirectorySeparatorChar;
-        foreach (string file in StudyInputs.FilesOf(study).Select(input => input.Path).Append(study.Path))
-        {
-            if (file.StartsWith(prefix, StringComparison.Ordinal))
-            {
-                throw new RefusalException(
-                    "--out", $"the folder {folder} holds '{Path.GetFileName(file)}', which the run reads, and a run replaces the folder",
-                    "a folder of its own for the results", "Name another folder.");
-            }
-        }
+        if (ResultsFolder.FirstInside(folder, StudyInputs.FilesOf(study).Select(input => input.Path).Append(study.Path)) is not { } file)
+            return;
+        throw new RefusalException(
+            "--out", $"the folder {folder} holds '{Path.GetFileName(file)}', which the run reads, and a run replaces the folder",
+            "a folder of its own for the results", "Name another folder.");
     }
 }
 

@@ -45,7 +45,7 @@ public static class StudyReader
         definition = definition with
         {
             Analysis = AnalysisReading.Read(root.Inner("analysis"), design, ofDesign),
-            Output = OutputReading.Output(root, folder, Inputs(definition)),
+            Output = OutputReading.Output(root, folder, [.. Inputs(definition)]),
         };
         StudyRules.Check(root, definition);
         return definition;

@@ -20,7 +20,7 @@ internal static class OutputReading
     /// <param name="root">The whole study file.</param>
     /// <param name="folder">Folder of the study file.</param>
     /// <param name="inputs">Full paths of all files the study reads.</param>
-    public static OutputSection Output(Section root, string folder, IEnumerable<string> inputs)
+    public static OutputSection Output(Section root, string folder, IReadOnlyCollection<string> inputs)
     {
         Section? section = root.Inner("output");
         string target = Path.GetFullPath(section?.Text("folder", "the path of a folder") ?? UsualFolder, folder);
@@ -37,14 +37,9 @@ internal static class OutputReading
         };
     }
 
-    // The folder is replaced as a whole: with an input inside, a run would delete it.
-    private static void RefuseFolderOfInputs(Section section, string key, string target, IEnumerable<string> inputs)
+    private static void RefuseFolderOfInputs(Section section, string key, string target, IReadOnlyCollection<string> inputs)
     {
-        string prefix = Path.TrimEndingDirectorySeparator(target) + Path.DirectorySeparatorChar;
-        foreach (string input in inputs)
-        {
-            if (input == target || input.StartsWith(prefix, StringComparison.Ordinal))
-                throw section.Refuse(key, $"the folder holds '{Path.GetFileName(input)}', which the study reads, and a run replaces the folder", "a folder of its own for the results", "Name another folder in output.folder.");
-        }
+        if ((inputs.FirstOrDefault(input => input == target) ?? ResultsFolder.FirstInside(target, inputs)) is { } held)
+            throw section.Refuse(key, $"the folder holds '{Path.GetFileName(held)}', which the study reads, and a run replaces the folder", "a folder of its own for the results", "Name another folder in output.folder.");
     }
 }
