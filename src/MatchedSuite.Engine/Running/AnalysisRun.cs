@@ -25,7 +25,7 @@ public sealed class AnalysisRun
     private readonly IRunObserver _observer;
     private readonly RunFolder _folder;
     private readonly ExecutionRecord _execution;
-    private readonly List<string> _warnings = [];
+    private readonly RunWarnings _warnings;
 
     private AnalysisRun(StudyDefinition study, RunOptions options, IRunObserver observer, RunFolder folder)
     {
@@ -34,6 +34,7 @@ public sealed class AnalysisRun
         _observer = observer;
         _folder = folder;
         _execution = new ExecutionRecord(options.Threads, options.Memory);
+        _warnings = new RunWarnings(options.Warnings, observer);
     }
 
     /// <summary>Reads, audits, tests, adjusts and writes; the folder appears whole or not at all.</summary>
@@ -61,7 +62,7 @@ public sealed class AnalysisRun
             _observer.Note("output.report: this version writes no report.html; summary.md is what a person reads first");
         _observer.Step($"reading {_study.Data.Samples}");
         using StudyInputs inputs = StudyInputs.Open(_study, _options, _folder.Partial);
-        Warn(inputs.Audit.Warnings.Select(warning => warning.Text));
+        _warnings.Take(inputs.Audit.Warnings.Select(warning => warning.Text));
         using var audit = new SideTask(_options.Threads, () =>
         {
             AuditFiles.Write(_folder, inputs);
@@ -83,7 +84,7 @@ public sealed class AnalysisRun
     private FinishedRun Analyse(StudyInputs inputs, CancellationToken cancellation)
     {
         var plan = new AnalysisPlan(inputs);
-        Warn(plan.Warnings);
+        _warnings.Take(plan.Warnings);
         using var store = new ResultStore(_folder.Partial)
         {
             Differences = plan.Flips is { } flips ? new DifferenceStore(flips.Width, _options.MemoryForDifferences, _folder.Partial) : null,
@@ -124,7 +125,7 @@ public sealed class AnalysisRun
             Groups = adjusted.Groups,
             Guaranteed = guaranteed,
             Top = tables.Top(summary, _study.Output.Top),
-            Warnings = _warnings,
+            Warnings = _warnings.Texts,
             Cautions = Cautions.For(_study, plan.Arrangement, summary.SomeMissing),
         };
     }
@@ -187,17 +188,6 @@ public sealed class AnalysisRun
         }
 
         warnings.AddRange(plan.Catalogue.Unmet(stream.Names));
-        Warn(warnings);
-    }
-
-    private void Warn(IEnumerable<string> warnings)
-    {
-        foreach (string warning in warnings)
-        {
-            if (_options.Warnings == WarningRule.Refuse)
-                throw new RefusalException("--strict", warning, "data without warnings", "Correct the data, or run without --strict.");
-            _warnings.Add(warning);
-            _observer.Warning(warning);
-        }
+        _warnings.Take(warnings);
     }
 }

@@ -24,13 +24,7 @@ public static class AuditRun
         observer.Step($"reading {study.Data.Samples}");
         var execution = new ExecutionRecord(options.Threads, options.Memory);
         using StudyInputs inputs = StudyInputs.Open(study, options, Path.GetTempPath());
-        foreach (AuditWarning warning in inputs.Audit.Warnings)
-        {
-            if (options.Warnings == WarningRule.Refuse)
-                throw new RefusalException("--strict", warning.Text, "data without warnings", "Correct the data, or run without --strict.");
-            observer.Warning(warning.Text);
-        }
-
+        new RunWarnings(options.Warnings, observer).Take(inputs.Audit.Warnings.Select(warning => warning.Text));
         cancellation.ThrowIfCancellationRequested();
         if (options.Folder is not null)
             Write(study, inputs, page, execution, cancellation);
