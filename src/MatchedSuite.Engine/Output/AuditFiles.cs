@@ -29,14 +29,10 @@ internal static class AuditFiles
             batch.Text(3)[batch.Rows] = row.Role;
             batch.Text(4)[batch.Rows] = WrittenName.Of(row.Disposition);
             batch.Rows++;
-            if (batch.Rows < batch.Capacity)
-                continue;
-            sink.Write(batch);
-            batch.Rows = 0;
+            batch.FlushWhenFull(sink);
         }
 
-        if (batch.Rows > 0)
-            sink.Write(batch);
+        batch.Flush(sink);
         sink.Complete();
     }
 }

@@ -37,13 +37,9 @@ internal static class DetailTable
             batch.Text(4)[batch.Rows] = Quantities[(int)detail.Quantity];
             batch.Reals(5)[batch.Rows] = detail.Value;
             batch.Rows++;
-            if (batch.Rows < batch.Capacity)
-                return;
-            sink.Write(batch);
-            batch.Rows = 0;
+            batch.FlushWhenFull(sink);
         });
-        if (batch.Rows > 0)
-            sink.Write(batch);
+        batch.Flush(sink);
         sink.Complete();
     }
 }

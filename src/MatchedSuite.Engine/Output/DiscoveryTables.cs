@@ -67,13 +67,10 @@ internal sealed class DiscoveryTables(AnalysisPlan plan, HypothesisTable table, 
             batch.Reals(5)[batch.Rows] = p.Log10;
             batch.Integers(6)[batch.Rows] = bounds[k];
             batch.Rows++;
-            if (batch.Rows < batch.Capacity)
-                continue;
-            sink.Write(batch);
-            batch.Rows = 0;
+            batch.FlushWhenFull(sink);
         }
 
-        sink.Write(batch);
+        batch.Flush(sink);
     }
 
     private void WriteFamilies(PrimaryList list, ClosedTesting testing, CsvTableSink sink)

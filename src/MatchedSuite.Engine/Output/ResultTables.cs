@@ -57,10 +57,10 @@ internal sealed class ResultTables
         {
             _rows.Read(position, row);
             _columns.Add(position, row[0], batch);
-            FlushWhenFull(batch, sink);
+            batch.FlushWhenFull(sink);
         }
 
-        sink.Write(batch);
+        batch.Flush(sink);
         sink.Complete();
         return order;
     }
@@ -104,18 +104,10 @@ internal sealed class ResultTables
             batch.Integers(4)[batch.Rows] = row.Missing;
             batch.Text(5)[batch.Rows] = UntestedReason.Of((Outcome)row.Outcome, _plan.Study);
             batch.Rows++;
-            FlushWhenFull(batch, sink);
+            batch.FlushWhenFull(sink);
         });
-        sink.Write(batch);
+        batch.Flush(sink);
         sink.Complete();
-    }
-
-    private static void FlushWhenFull(TableBatch batch, CsvTableSink sink)
-    {
-        if (batch.Rows < batch.Capacity)
-            return;
-        sink.Write(batch);
-        batch.Rows = 0;
     }
 
     private void WriteAll<TSink>(TSink sink)
@@ -125,13 +117,9 @@ internal sealed class ResultTables
         _rows.Scan((int position, in ResultRow row) =>
         {
             _columns.Add(position, row, batch);
-            if (batch.Rows < batch.Capacity)
-                return;
-            sink.Write(batch);
-            batch.Rows = 0;
+            batch.FlushWhenFull(sink);
         });
-        if (batch.Rows > 0)
-            sink.Write(batch);
+        batch.Flush(sink);
         sink.Complete();
     }
 }

@@ -41,7 +41,7 @@ internal sealed class TwinTable
         var table = new TwinTable(sink, names);
         details.Scan((int _, in DetailRow detail) => table.Take(detail, plan.StratumName(detail.Stratum)));
         table.EndRow();
-        sink.Write(table._batch);
+        table._batch.Flush(sink);
         sink.Complete();
     }
 
@@ -81,9 +81,6 @@ internal sealed class TwinTable
         _batch.Reals(8)[_batch.Rows] = Falconer.SharedEnvironment(monozygotic, dizygotic);
         _batch.Rows++;
         _endpoint = -1;
-        if (_batch.Rows < _batch.Capacity)
-            return;
-        _sink.Write(_batch);
-        _batch.Rows = 0;
+        _batch.FlushWhenFull(_sink);
     }
 }

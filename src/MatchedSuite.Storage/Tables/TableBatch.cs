@@ -28,6 +28,22 @@ public sealed class TableBatch
     /// <summary>Rows filled so far.</summary>
     public int Rows { get; set; }
 
+    /// <summary>Hands a full batch to a sink and empties it; one with room is left as it is.</summary>
+    public void FlushWhenFull(ITableSink sink)
+    {
+        if (Rows == Capacity)
+            Flush(sink);
+    }
+
+    /// <summary>Hands the filled rows to a sink, if there are any, and empties the batch.</summary>
+    public void Flush(ITableSink sink)
+    {
+        if (Rows == 0)
+            return;
+        sink.Write(this);
+        Rows = 0;
+    }
+
     /// <summary>A text column's cells.</summary>
     public string?[] Text(int column) => (string?[])_columns[column];
 

@@ -101,11 +101,10 @@ public static class TableCopy
                 else batch.Truths(header.Count + column)[batch.Rows] = added[column].Truths[row];
             }
             row++;
-            if (++batch.Rows < batch.Capacity) continue;
-            sink.Write(batch);
-            batch.Rows = 0;
+            batch.Rows++;
+            batch.FlushWhenFull(sink);
         }
-        sink.Write(batch);
+        batch.Flush(sink);
         sink.Complete();
     }
 
